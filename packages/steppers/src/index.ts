@@ -1,1 +1,26 @@
-export {};
+// The catalogue and steppers of one's own.
+
+// Steps as straight-line programs, for proofs and other emitters.
+export type { BuildStep, Setting } from "./build/step-program.ts";
+export { catalogue, findStepper } from "./catalogue.ts";
+export { InvalidInputError } from "./errors.ts";
+export { ownStepper } from "./own-stepper.ts";
+export { countEvaluations, countFlops } from "./program/count.ts";
+export { emitJavaScript } from "./program/emit-javascript.ts";
+export type { Advance, Evaluate, Executable, Scratch } from "./program/executable.ts";
+export { makeScratch } from "./program/executable.ts";
+export { pointMass, suppliedForce } from "./program/force.ts";
+export { interpret } from "./program/interpret.ts";
+export { type Lowered, lower } from "./program/lower.ts";
+export type { BinaryKind, Dimension, Operation, Program, StepProgram, Value } from "./program/program.ts";
+export type { ProgramStepper } from "./run/fixed-step.ts";
+export type {
+  Acceleration,
+  OwnStepper,
+  Start,
+  Stepper,
+  StepperFamily,
+  StepperInfo,
+  Summation,
+  Trajectory,
+} from "./stepper.ts";

@@ -1,0 +1,203 @@
+import type { PairProgram } from "../build/pair.ts";
+import type { Setting } from "../build/step-program.ts";
+import { invalid } from "../errors.ts";
+import { compile } from "../program/compile.ts";
+import { countEvaluations } from "../program/count.ts";
+import { type Executable, makeScratch, type Scratch } from "../program/executable.ts";
+import { pointMass, suppliedForce } from "../program/force.ts";
+import type { Acceleration, Start, Stepper, StepperInfo, Trajectory } from "../stepper.ts";
+import { checkAdvance, dimensionOf } from "./begin.ts";
+import { type Controller, makeController, power64 } from "./controller.ts";
+import { evaluateDense } from "./dense.ts";
+import { advanceTime, type Time, timeUntil } from "./double-double.ts";
+
+export type PairClaims = Omit<
+  StepperInfo,
+  "evaluationsPerStep" | "startEvaluations" | "knob" | "uneven" | "denseOutput" | "selfStarting"
+> & { readonly embeddedOrder: number };
+
+/** A variable-step stepper whose trial step is a straight-line program. */
+export interface PairStepper extends Stepper {
+  pair(setting: Setting): PairProgram;
+}
+
+/** A variable-step stepper from an embedded pair. `dense`: rows of b_i(theta), lowest power first. */
+export function variableStep(
+  { embeddedOrder, ...claims }: PairClaims,
+  build: (setting: Setting) => PairProgram,
+  dense: readonly (readonly number[])[] | null,
+): PairStepper {
+  const compiled = new Map<string, Compiled>();
+  const lowerOrder = Math.min(claims.order, embeddedOrder);
+  return {
+    ...claims,
+    knob: "tolerance",
+    uneven: true,
+    denseOutput: dense !== null,
+    selfStarting: true,
+    evaluationsPerStep: null,
+    startEvaluations: null,
+    pair: build,
+    begin(start: Start): Trajectory {
+      const dimension = dimensionOf(start);
+      const supplied = start.acceleration !== undefined;
+      const key = `${dimension} ${supplied}`;
+      let pair = compiled.get(key);
+      if (pair === undefined) {
+        const force = supplied ? suppliedForce : pointMass;
+        const program = build({ dimension, summation: "plain", force });
+        pair = { program, first: compile(program.first), trial: compile(program.trial) };
+        compiled.set(key, pair);
+      }
+      return new VariableStepRun(start, pair, lowerOrder, dense);
+    },
+  };
+}
+
+interface Compiled {
+  readonly program: PairProgram;
+  readonly first: Executable;
+  readonly trial: Executable;
+}
+
+const noForce = (): void => {};
+
+class VariableStepRun implements Trajectory {
+  evaluations = 0;
+  rejectedSteps = 0;
+  smallestStep: number = Number.POSITIVE_INFINITY;
+  readonly interpolate?: (timeHi: number, timeLo: number, out: Float64Array) => void;
+  readonly #pair: Compiled;
+  readonly #width: number;
+  readonly #force: Acceleration;
+  readonly #scratch: Scratch;
+  readonly #controller: Controller;
+  readonly #tolerance: number;
+  readonly #end: Time;
+  readonly #time: Time = { hi: 0, lo: 0 };
+  /** State, then the acceleration there. */
+  readonly #inputs: Float64Array;
+  readonly #outputs: Float64Array;
+  /** Where the last step made began, and its length. */
+  readonly #before: Float64Array;
+  readonly #timeBefore: Time = { hi: 0, lo: 0 };
+  #lastStep = 0;
+  #step: number;
+
+  constructor(
+    start: Start,
+    pair: Compiled,
+    lowerOrder: number,
+    dense: readonly (readonly number[])[] | null,
+  ) {
+    const d = dimensionOf(start);
+    const { tolerance, endTime, summation = "plain" } = start;
+    if (!(tolerance !== undefined && tolerance > 0 && tolerance < 1)) throw invalid.tolerance(tolerance);
+    if (
+      !(endTime !== undefined && endTime[0] > 0 && Number.isFinite(endTime[0]) && Number.isFinite(endTime[1]))
+    ) {
+      throw invalid.endTime(endTime);
+    }
+    if (summation !== "plain") throw invalid.summation(summation);
+    this.#pair = pair;
+    this.#width = 2 * d;
+    this.#force = start.acceleration ?? noForce;
+    this.#scratch = makeScratch(d);
+    this.#controller = makeController(lowerOrder);
+    this.#tolerance = tolerance;
+    this.#end = { hi: endTime[0], lo: endTime[1] };
+    this.#inputs = new Float64Array(3 * d);
+    this.#inputs.set(start.state);
+    this.#before = start.state.slice();
+    this.#outputs = new Float64Array(pair.program.trial.outputs.length);
+    this.#evaluateFirst();
+    this.#step = Math.min(firstStep(this.#inputs, d, tolerance, lowerOrder), endTime[0]);
+    if (dense !== null) this.interpolate = (hi, lo, out) => this.#interpolate(dense, hi, lo, out);
+  }
+
+  advance(maxSteps: number, rows: Float64Array, times?: Float64Array): number {
+    checkAdvance(maxSteps, this.#width, rows, true, times);
+    for (let n = 0; n < maxSteps; n += 1) {
+      if (timeUntil(this.#time, this.#end.hi, this.#end.lo) <= 0) return n;
+      this.#makeStep();
+      rows.set(this.#inputs.subarray(0, this.#width), n * this.#width);
+      times![2 * n] = this.#time.hi;
+      times![2 * n + 1] = this.#time.lo;
+    }
+    return maxSteps;
+  }
+
+  /** Tries until a step is accepted. A state that is not finite, or a step of 2^-60 of the whole run, is accepted as it comes. */
+  #makeStep(): void {
+    const remaining = timeUntil(this.#time, this.#end.hi, this.#end.lo);
+    const smallest = this.#end.hi * 2 ** -60;
+    const hopeless = !allFinite(this.#inputs, this.#width);
+    let rejected = false;
+    for (;;) {
+      // A step that nearly reaches the end is stretched to it, so that no sliver of a step remains.
+      const last = this.#step * 1.0001 >= remaining;
+      const h = last ? remaining : this.#step;
+      this.#pair.trial.evaluate(h, this.#inputs, this.#outputs, this.#force, this.#scratch);
+      this.evaluations += countEvaluations(this.#pair.program.trial);
+      const finite = allFinite(this.#outputs, this.#width);
+      const ratio = this.#outputs[this.#width]! / this.#tolerance;
+      const error = finite && ratio >= 0 ? ratio : Number.POSITIVE_INFINITY;
+      if (error <= 1 || hopeless || h <= smallest) {
+        this.#accept(h, last);
+        this.#step = h * this.#controller.accepted(Math.min(error, 1), rejected);
+        return;
+      }
+      rejected = true;
+      this.rejectedSteps += 1;
+      this.#step = h * this.#controller.rejected(error);
+    }
+  }
+
+  #accept(h: number, last: boolean): void {
+    const width = this.#width;
+    this.#before.set(this.#inputs.subarray(0, width));
+    this.#timeBefore.hi = this.#time.hi;
+    this.#timeBefore.lo = this.#time.lo;
+    this.#lastStep = h;
+    if (last) Object.assign(this.#time, this.#end);
+    else advanceTime(this.#time, h);
+    if (!last || this.smallestStep === Number.POSITIVE_INFINITY)
+      this.smallestStep = Math.min(this.smallestStep, h);
+    this.#inputs.set(this.#outputs.subarray(0, width));
+    if (this.#pair.program.lastIsFirst) {
+      this.#inputs.set(this.#outputs.subarray(width + 1, width + 1 + width / 2), width);
+    } else this.#evaluateFirst();
+  }
+
+  #evaluateFirst(): void {
+    const acceleration = this.#inputs.subarray(this.#width);
+    this.#pair.first.evaluate(0, this.#inputs, acceleration, this.#force, this.#scratch);
+    this.evaluations += countEvaluations(this.#pair.program.first);
+  }
+
+  #interpolate(dense: readonly (readonly number[])[], hi: number, lo: number, out: Float64Array): void {
+    const since = timeUntil(this.#timeBefore, hi, lo);
+    const theta = since / this.#lastStep;
+    if (!(theta >= 0 && theta <= 1)) throw invalid.interpolationTime(hi);
+    const from = this.#width + 1 + (this.#pair.program.lastIsFirst ? this.#width / 2 : 0);
+    evaluateDense(dense, theta, this.#lastStep, this.#before, this.#outputs.subarray(from), out);
+  }
+}
+
+function allFinite(values: Float64Array, count: number): boolean {
+  for (let k = 0; k < count; k += 1) if (!Number.isFinite(values[k])) return false;
+  return true;
+}
+
+/** A first guess: the local dynamical time, the shorter of |q|/|v| and sqrt(|q|/|a|), times tolerance^(1/k); the control mends it. */
+function firstStep(state: Float64Array, d: number, tolerance: number, lowerOrder: number): number {
+  const size = (from: number): number => {
+    let largest = 0;
+    for (let k = from; k < from + d; k += 1) largest = Math.max(largest, Math.abs(state[k]!));
+    return largest;
+  };
+  const length = size(0);
+  const dynamicalTime = Math.min(length / size(d), Math.sqrt(length / size(2 * d)));
+  const guess = dynamicalTime * power64(tolerance, Math.round(64 / (lowerOrder + 1)));
+  return guess > 0 ? guess : Number.POSITIVE_INFINITY;
+}

@@ -1,0 +1,3 @@
+import { runCellTask } from "./cell-task.ts";
+
+export default runCellTask;

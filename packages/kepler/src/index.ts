@@ -24,6 +24,7 @@ export { InvalidInputError } from "./errors.ts";
 export { arctangent2 } from "./functions/arctangent.ts";
 export { cos, sin, sinCosInto } from "./functions/sin-cos.ts";
 // Planar motion, normalised units
+export { type ExactState, exactState } from "./planar/exact-state.ts";
 export {
   angularMomentum,
   eccentricityVector,

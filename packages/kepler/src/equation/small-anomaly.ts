@@ -17,7 +17,8 @@ export function smallAnomaly(
   const first = anomalyOfCubic(e, complement, mean);
   const z1 = first * first;
   const lag1 = first * z1 * (1 / 6 + z1 * (-1 / 120 + z1 * (1 / 5040)));
-  const second = first - (complement * first - mean + e * lag1) / (complement + e * z1 * (0.5 - z1 * (1 / 24)));
+  const second =
+    first - (complement * first - mean + e * lag1) / (complement + e * z1 * (0.5 - z1 * (1 / 24)));
   const scaled = splitter * second;
   const node = scaled - (scaled - second);
   const z = node * node;

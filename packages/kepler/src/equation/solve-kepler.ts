@@ -56,7 +56,11 @@ function solveHalfTurn(e: number, mean: number, meanLow: number): number {
   const nodeLow = p - (node - t) + (s - t) + (pLow + sLow + (e * nodes[at + 4]! + complementLow * anomaly));
   const r = complement + eVersine;
   const scale = 1 / r;
-  const correction = anomalyCorrection((mean - node + (meanLow - nodeLow)) * scale, eSin * scale, (e - eVersine) * scale);
+  const correction = anomalyCorrection(
+    (mean - node + (meanLow - nodeLow)) * scale,
+    eSin * scale,
+    (e - eVersine) * scale,
+  );
   return anomaly + correction;
 }
 

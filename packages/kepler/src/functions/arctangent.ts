@@ -1,5 +1,13 @@
 import { pi } from "../arithmetic/constants.ts";
-import { type DoubleDouble, ddAdd, ddDivide, ddMultiply, ddOf, ddScale, ddSubtract } from "../arithmetic/double-double.ts";
+import {
+  type DoubleDouble,
+  ddAdd,
+  ddDivide,
+  ddMultiply,
+  ddOf,
+  ddScale,
+  ddSubtract,
+} from "../arithmetic/double-double.ts";
 import { ddSinCos } from "../arithmetic/double-double-sin-cos.ts";
 import { splitter } from "../arithmetic/two-product.ts";
 
@@ -14,7 +22,9 @@ function nodeAngles(): Float64Array {
   for (let k = 1; k <= nodes; k++) {
     const t = k / nodes;
     const t2 = t * t;
-    let angle: DoubleDouble = ddOf(t * (0.99987 + t2 * (-0.3303 + t2 * (0.18014 + t2 * (-0.08513 + t2 * 0.02084)))));
+    let angle: DoubleDouble = ddOf(
+      t * (0.99987 + t2 * (-0.3303 + t2 * (0.18014 + t2 * (-0.08513 + t2 * 0.02084)))),
+    );
     for (let pass = 0; pass < 2; pass++) {
       const { sin, cos } = ddSinCos(angle);
       const d = ddDivide(ddSubtract(ddScale(cos, t), sin), ddAdd(cos, ddScale(sin, t)));
@@ -47,8 +57,7 @@ export function arctangent2(y: number, x: number): number {
   const upper = scaled - (scaled - big);
   const d = (small - t * upper - t * (big - upper)) / (big + t * small);
   const z = d * d;
-  const series =
-    d * z * (-1 / 3 + z * (1 / 5 + z * (-1 / 7 + z * (1 / 9 - z * (1 / 11)))));
+  const series = d * z * (-1 / 3 + z * (1 / 5 + z * (-1 / 7 + z * (1 / 9 - z * (1 / 11)))));
   // angle = hi + lo, with hi a node (or pi/2, pi and their differences with it) larger than what follows.
   let hi = angles[2 * k]!;
   let lo = angles[2 * k + 1]! + series;

@@ -7,7 +7,8 @@ const result: Float64Array = new Float64Array(2);
 function sineOnEighth(x: number, dx: number): number {
   const z = x * x;
   const tail =
-    1 / 362880 + z * (-1 / 39916800 + z * (1 / 6227020800 + z * (-1 / 1307674368000 + z * (1 / 355687428096000))));
+    1 / 362880 +
+    z * (-1 / 39916800 + z * (1 / 6227020800 + z * (-1 / 1307674368000 + z * (1 / 355687428096000))));
   const p = -1 / 6 + z * (1 / 120 + z * (-1 / 5040 + z * tail));
   return x + (x * z * p + dx * (1 - 0.5 * z));
 }

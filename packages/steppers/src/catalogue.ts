@@ -1,25 +1,34 @@
-import { fromPair, fromSplitting, fromTableau } from "./build/stepper-of.ts";
-import { dormandPrince5 } from "./methods/runge-kutta/dormand-prince-5.ts";
-import { explicitEuler } from "./methods/runge-kutta/explicit-euler.ts";
-import { rk4 } from "./methods/runge-kutta/rk4.ts";
-import { leapfrog, velocityVerlet } from "./methods/splitting/second-order.ts";
-import { symplecticEuler } from "./methods/splitting/symplectic-euler.ts";
+import {
+  fromComposition,
+  fromNystrom,
+  fromNystromPair,
+  fromPair,
+  fromSplitting,
+  fromTableau,
+} from "./build/stepper-of.ts";
+import { hasEmbedded } from "./methods/method.ts";
+import { compositions, nystromTableaus, splittings, tableaus } from "./registry.ts";
 import type { Stepper } from "./stepper.ts";
 
-/** Every built-in stepper. A new method is one data file and one line here. */
+/** Every built-in stepper, family by family. */
 export const catalogue: readonly Stepper[] = [
-  fromTableau(explicitEuler),
-  fromTableau(rk4),
-  fromTableau(dormandPrince5),
-  fromPair(dormandPrince5),
-  fromSplitting(symplecticEuler),
-  fromSplitting(leapfrog),
-  fromSplitting(velocityVerlet),
+  ...tableaus.map(fromTableau),
+  ...tableaus.filter(hasEmbedded).map(fromPair),
+  ...nystromTableaus.map(fromNystrom),
+  ...nystromTableaus.filter(hasEmbedded).map(fromNystromPair),
+  ...splittings.map(fromSplitting),
+  ...compositions.flatMap(fromComposition),
 ];
+
+/** Other usual names of steppers in the catalogue. */
+const aliases: ReadonlyMap<string, string> = new Map([
+  ["yoshida-4", "forest-ruth-4"],
+  ["yoshida-4-kdk", "forest-ruth-4-kdk"],
+]);
 
 const byId: ReadonlyMap<string, Stepper> = new Map(catalogue.map((stepper) => [stepper.id, stepper]));
 
-/** The built-in stepper of that id, if there is one. */
+/** The built-in stepper of that id or other usual name, if there is one. */
 export function findStepper(id: string): Stepper | undefined {
-  return byId.get(id);
+  return byId.get(aliases.get(id) ?? id);
 }

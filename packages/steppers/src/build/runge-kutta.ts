@@ -1,6 +1,6 @@
 import { parseRow } from "../exact/coefficients.ts";
 import { isZero, type Rational } from "../exact/rational.ts";
-import type { Embedded, Tableau } from "../methods/method.ts";
+import type { EmbeddedTableau, Tableau } from "../methods/method.ts";
 import type { ProgramBuilder } from "../program/builder.ts";
 import type { StepProgram, Value } from "../program/program.ts";
 import { buildPair, difference, lastStageIsNext, type PairProgram } from "./pair.ts";
@@ -91,10 +91,9 @@ export function buildRungeKutta(method: Tableau, setting: Setting): StepProgram 
 }
 
 /** The trial step of an embedded pair. */
-export function buildRungeKuttaPair(method: Tableau, embedded: Embedded, setting: Setting): PairProgram {
+export function buildRungeKuttaPair(method: EmbeddedTableau, setting: Setting): PairProgram {
   const a = method.a.map(parseRow);
-  const weights = parseRow(method.b);
-  const others = [embedded.b, ...(embedded.second === undefined ? [] : [embedded.second])].map(parseRow);
+  const { weights, errors } = pairWeights(method);
   const all = weights.map(() => true);
   return buildPair(setting, (b, q, v, first) => {
     const slopes = writeStages(b, a, all, q, v, first);
@@ -103,12 +102,26 @@ export function buildRungeKuttaPair(method: Tableau, embedded: Embedded, setting
     return {
       position: moved(q, increments(b, weights, slopes.velocity)),
       velocity: moved(v, increments(b, weights, slopes.acceleration)),
-      errors: others.map((other) => ({
-        position: increments(b, difference(weights, other), slopes.velocity),
-        velocity: increments(b, difference(weights, other), slopes.acceleration),
+      errors: errors.map((error) => ({
+        position: increments(b, error, slopes.velocity),
+        velocity: increments(b, error, slopes.acceleration),
       })),
       next: lastStageIsNext(a, weights) ? slopes.acceleration.at(-1)! : null,
       slopes: method.dense === undefined ? [] : [...slopes.velocity.flat(), ...slopes.acceleration.flat()],
     };
   });
+}
+
+/** The weights that a variable-step run goes on from, and those of its one or two error estimates. */
+export function pairWeights(method: EmbeddedTableau): {
+  readonly weights: readonly Rational[];
+  readonly errors: readonly (readonly Rational[])[];
+} {
+  const { embedded } = method;
+  const main = parseRow(method.b);
+  const error =
+    embedded.b === undefined ? parseRow(embedded.difference ?? "") : difference(main, parseRow(embedded.b));
+  const weights = embedded.advances === true ? difference(main, error) : main;
+  const second = embedded.second === undefined ? [] : [difference(main, parseRow(embedded.second))];
+  return { weights, errors: [error, ...second] };
 }

@@ -4,13 +4,13 @@ import type { Splitting } from "../methods/method.ts";
 import type { StepProgram, Value } from "../program/program.ts";
 import { buildStep, type Setting } from "./step-program.ts";
 
-export interface Operation {
+export interface SplittingOperation {
   readonly kind: "drift" | "kick";
   readonly weight: Rational;
 }
 
 /** All operations of a splitting in order, the mirrored half included. */
-export function operationsOf(method: Splitting): readonly Operation[] {
+export function operationsOf(method: Splitting): readonly SplittingOperation[] {
   const half = parseRow(method.weights);
   const weights = method.symmetric ? [...half, ...half.slice(0, -1).reverse()] : half;
   const other = method.first === "drift" ? "kick" : "drift";
@@ -21,8 +21,7 @@ export function operationsOf(method: Splitting): readonly Operation[] {
  * One step. Where it begins and ends with a kick, the acceleration of the last one serves the first one of the next step (the position is
  * the same), so it is carried.
  */
-export function buildSplitting(method: Splitting, setting: Setting): StepProgram {
-  const operations = operationsOf(method);
+export function buildSplitting(operations: readonly SplittingOperation[], setting: Setting): StepProgram {
   const carries = operations[0]!.kind === "kick" && operations.at(-1)!.kind === "kick";
   return buildStep(setting, carries, (b, state, carried) => {
     let acceleration: readonly Value[] = carried;

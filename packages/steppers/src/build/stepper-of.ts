@@ -1,10 +1,23 @@
 import { parseRow } from "../exact/coefficients.ts";
-import { toDouble } from "../exact/rational.ts";
-import type { EmbeddedTableau, Published, Splitting, Tableau } from "../methods/method.ts";
+import { type Rational, toDouble } from "../exact/rational.ts";
+import type {
+  Composition,
+  EmbeddedNystrom,
+  EmbeddedTableau,
+  NystromTableau,
+  Published,
+  Splitting,
+  Tableau,
+} from "../methods/method.ts";
+import { type Dense, nystromInterpolant, rungeKuttaInterpolant } from "../run/dense.ts";
 import { fixedStep, type ProgramStepper } from "../run/fixed-step.ts";
 import { type PairStepper, variableStep } from "../run/variable-step.ts";
+import { compose } from "./composition.ts";
+import { denseRows } from "./dense-rows.ts";
+import { buildDenseStages } from "./dense-stages.ts";
+import { buildNystrom, buildNystromPair } from "./nystrom.ts";
 import { buildRungeKutta, buildRungeKuttaPair, liveStages } from "./runge-kutta.ts";
-import { buildSplitting, operationsOf } from "./splitting.ts";
+import { buildSplitting, operationsOf, type SplittingOperation } from "./splitting.ts";
 
 const published = ({ id, title, order, source, note }: Published): Published => ({
   id,
@@ -15,40 +28,115 @@ const published = ({ id, title, order, source, note }: Published): Published => 
 });
 
 const notGeometric = { symplectic: false, timeReversible: false, explicit: true } as const;
+const rounded = (rows: readonly (readonly Rational[])[]): number[][] => rows.map((row) => row.map(toDouble));
 
 /** A fixed-step stepper from an explicit Runge-Kutta tableau. */
 export function fromTableau(method: Tableau): ProgramStepper {
-  const live = liveStages(method.a.map(parseRow), parseRow(method.b));
-  const stages = live.filter(Boolean).length;
-  const claims = { ...published(method), ...notGeometric, family: "runge-kutta", stages } as const;
-  return fixedStep(claims, (setting) => buildRungeKutta(method, setting));
+  return fixedStep(
+    {
+      ...published(method),
+      ...notGeometric,
+      family: "runge-kutta",
+      stages: () => liveStages(method.a.map(parseRow), parseRow(method.b)).filter(Boolean).length,
+    },
+    (setting) => buildRungeKutta(method, setting),
+  );
 }
 
 /** The variable-step stepper of a tableau that has an embedded formula. */
 export function fromPair(method: EmbeddedTableau): PairStepper {
   const { embedded, dense } = method;
-  const claims = {
-    ...published(method),
-    ...notGeometric,
-    id: embedded.id,
-    title: embedded.title,
-    family: "runge-kutta",
-    stages: method.a.length,
-    embeddedOrder: embedded.order,
-  } as const;
-  const rows = dense?.rows.map((row) => parseRow(row).map(toDouble)) ?? null;
-  return variableStep(claims, (setting) => buildRungeKuttaPair(method, embedded, setting), rows);
+  const swapped = embedded.advances === true;
+  return variableStep(
+    {
+      ...published(method),
+      ...notGeometric,
+      id: embedded.id,
+      title: embedded.title,
+      family: "runge-kutta",
+      order: swapped ? embedded.order : method.order,
+      embeddedOrder: swapped ? method.order : embedded.order,
+      stages: () => method.a.length,
+    },
+    (setting) => buildRungeKuttaPair(method, setting),
+    dense === undefined ? null : () => rungeKuttaDense(dense, method),
+  );
 }
 
-/** A fixed-step stepper from a splitting; stages are its kicks. */
+function rungeKuttaDense(dense: NonNullable<Tableau["dense"]>, method: Tableau): Dense {
+  return {
+    order: dense.order,
+    interpolate: rungeKuttaInterpolant(rounded(denseRows(dense, parseRow(method.b)))),
+    stages: "rows" in dense ? null : (setting) => buildDenseStages(dense, method.a.length, setting),
+  };
+}
+
+/** A fixed-step stepper from a Nystrom tableau. */
+export function fromNystrom(method: NystromTableau): ProgramStepper {
+  return fixedStep(
+    { ...published(method), ...notGeometric, family: "runge-kutta-nystrom", stages: () => method.a.length },
+    (setting) => buildNystrom(method, setting),
+  );
+}
+
+/** The variable-step stepper of a Nystrom tableau that has an embedded formula. */
+export function fromNystromPair(method: EmbeddedNystrom): PairStepper {
+  const { embedded, dense } = method;
+  return variableStep(
+    {
+      ...published(method),
+      ...notGeometric,
+      id: embedded.id,
+      title: embedded.title,
+      family: "runge-kutta-nystrom",
+      embeddedOrder: embedded.order,
+      stages: () => method.a.length,
+    },
+    (setting) => buildNystromPair(method, setting),
+    dense === undefined
+      ? null
+      : () => ({
+          order: dense.order,
+          interpolate: nystromInterpolant(
+            rounded(dense.position.map(parseRow)),
+            rounded(dense.velocity.map(parseRow)),
+          ),
+          stages: null,
+        }),
+  );
+}
+
+/** A fixed-step stepper from a splitting; its stages are its kicks. */
 export function fromSplitting(method: Splitting): ProgramStepper {
-  const claims = {
-    ...published(method),
-    family: "symplectic-splitting",
-    symplectic: true,
-    timeReversible: method.symmetric,
-    explicit: true,
-    stages: operationsOf(method).filter(({ kind }) => kind === "kick").length,
-  } as const;
-  return fixedStep(claims, (setting) => buildSplitting(method, setting));
+  const { order, genericOrder = order } = method;
+  const note = `Order ${order} where kinetic energy is quadratic in the velocity, as here; order ${genericOrder} for any two flows.`;
+  const noted = genericOrder < order ? { ...method, note } : method;
+  return splittingStepper(noted, method.symmetric, () => operationsOf(method));
+}
+
+/** Two fixed-step steppers from a composition: over leapfrog, and over velocity Verlet with `-kdk` after the id. */
+export function fromComposition(method: Composition): readonly [ProgramStepper, ProgramStepper] {
+  const kdk = { ...method, id: `${method.id}-kdk`, title: `${method.title}, kick–drift–kick` };
+  return [
+    splittingStepper(method, true, () => compose(method, "drift")),
+    splittingStepper(kdk, true, () => compose(method, "kick")),
+  ];
+}
+
+function splittingStepper(
+  method: Published,
+  timeReversible: boolean,
+  operations: () => readonly SplittingOperation[],
+): ProgramStepper {
+  return fixedStep(
+    {
+      ...published(method),
+      family: "symplectic-splitting",
+      symplectic: true,
+      timeReversible,
+      explicit: true,
+      stages: () => operations().filter(({ kind }) => kind === "kick").length,
+    },
+    (setting) => buildSplitting(operations(), setting),
+  );
 }

@@ -1,23 +1,65 @@
+import type { Setting } from "../build/step-program.ts";
+import type { Program } from "../program/program.ts";
+
 /**
- * State at theta of a step of length h from its stage slopes: y(theta) = y0 + h sum_i b_i(theta) k_i, b_i(theta) = sum_k rows[i][k]
- * theta^(k+1). `slopes` holds the position slopes of all stages, then the velocity slopes. Error: that of the continuous formula's order.
+ * The state inside a step, from the state before it and the step's slopes as its program left them. Error: that of the continuous
+ * formula's order.
  */
-export function evaluateDense(
-  rows: readonly (readonly number[])[],
+export type Interpolate = (
   theta: number,
   h: number,
   before: Float64Array,
   slopes: Float64Array,
   out: Float64Array,
-): void {
-  const d = before.length / 2;
-  out.set(before);
-  rows.forEach((row, i) => {
-    let weight = 0;
-    for (let k = row.length - 1; k >= 0; k -= 1) weight = (weight + row[k]!) * theta;
+) => void;
+
+export interface Dense {
+  readonly order: number;
+  readonly interpolate: Interpolate;
+  /** Stages that only interpolation needs: made, and counted, when a step is first interpolated. */
+  readonly stages: ((setting: Setting) => Program) | null;
+}
+
+type Rows = readonly (readonly number[])[];
+
+/**
+ * y(theta) = y0 + h sum_i b_i(theta) k_i, b_i(theta) = sum_k rows[i][k] theta^(k+1); `slopes` holds the velocities of all stages, then
+ * their accelerations.
+ */
+export function rungeKuttaInterpolant(rows: Rows): Interpolate {
+  return (theta, h, before, slopes, out) => {
+    const d = before.length / 2;
+    out.set(before);
+    rows.forEach((row, i) => {
+      const weight = h * theta * horner(row, theta);
+      for (let k = 0; k < d; k += 1) {
+        out[k] = out[k]! + weight * slopes[i * d + k]!;
+        out[d + k] = out[d + k]! + weight * slopes[(rows.length + i) * d + k]!;
+      }
+    });
+  };
+}
+
+/** q + theta h v + (theta h)^2 sum_i p_i(theta) a_i and v + theta h sum_i w_i(theta) a_i; `slopes` holds the accelerations. */
+export function nystromInterpolant(position: Rows, velocity: Rows): Interpolate {
+  return (theta, h, before, slopes, out) => {
+    const d = before.length / 2;
+    const s = theta * h;
     for (let k = 0; k < d; k += 1) {
-      out[k] = out[k]! + h * weight * slopes[i * d + k]!;
-      out[d + k] = out[d + k]! + h * weight * slopes[(rows.length + i) * d + k]!;
+      let q = 0;
+      let v = 0;
+      for (let i = 0; i < position.length; i += 1) {
+        q += horner(position[i]!, theta) * slopes[i * d + k]!;
+        v += horner(velocity[i]!, theta) * slopes[i * d + k]!;
+      }
+      out[k] = before[k]! + s * (before[d + k]! + s * q);
+      out[d + k] = before[d + k]! + s * v;
     }
-  });
+  };
+}
+
+function horner(row: readonly number[], x: number): number {
+  let value = 0;
+  for (let k = row.length - 1; k >= 0; k -= 1) value = value * x + row[k]!;
+  return value;
 }

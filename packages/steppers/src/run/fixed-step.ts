@@ -7,11 +7,14 @@ import type { StepProgram } from "../program/program.ts";
 import type { Start, Stepper, StepperInfo, Summation, Trajectory } from "../stepper.ts";
 import { checkAdvance, dimensionOf, stepOf } from "./begin.ts";
 
-/** Claims of a method that a fixed step makes whole: the rest of `StepperInfo` is counted from its program. */
-export type Claims = Omit<
+/** What a method claims of itself. The rest of `StepperInfo` is counted from its program when first asked for. */
+export type Claims = Pick<
   StepperInfo,
-  "evaluationsPerStep" | "startEvaluations" | "knob" | "uneven" | "denseOutput" | "selfStarting"
->;
+  "id" | "title" | "family" | "order" | "source" | "note" | "symplectic" | "timeReversible" | "explicit"
+> & {
+  readonly stages: () => number;
+  readonly uneven?: boolean;
+};
 
 /** A stepper of fixed h whose step is a straight-line program. Programs are built and compiled when first needed, once each. */
 export interface ProgramStepper extends Stepper {
@@ -23,8 +26,7 @@ const noForce = (): void => {};
 const noTimes = new Float64Array(0);
 
 export function fixedStep(claims: Claims, build: BuildStep): ProgramStepper {
-  const sample = build({ dimension: 2, summation: "plain", force: pointMass });
-  const uneven = sample.step.time !== null;
+  const { stages, uneven = false, ...info } = claims;
   const compiled = new Map<string, { step: Executable; start: Executable; program: StepProgram }>();
 
   const get = (dimension: 2 | 3, summation: Summation, supplied: boolean) => {
@@ -39,13 +41,20 @@ export function fixedStep(claims: Claims, build: BuildStep): ProgramStepper {
   };
 
   return {
-    ...claims,
+    ...info,
     knob: "step",
     uneven,
     denseOutput: false,
     selfStarting: true,
-    evaluationsPerStep: countEvaluations(sample.step),
-    startEvaluations: countEvaluations(sample.start),
+    get stages() {
+      return stages();
+    },
+    get evaluationsPerStep() {
+      return countEvaluations(get(2, "plain", false).program.step);
+    },
+    get startEvaluations() {
+      return countEvaluations(get(2, "plain", false).program.start);
+    },
     program: build,
     begin(start: Start): Trajectory {
       const dimension = dimensionOf(start);

@@ -5,38 +5,42 @@ import { compile } from "../program/compile.ts";
 import { countEvaluations } from "../program/count.ts";
 import { type Executable, makeScratch, type Scratch } from "../program/executable.ts";
 import { pointMass, suppliedForce } from "../program/force.ts";
-import type { Acceleration, Start, Stepper, StepperInfo, Trajectory } from "../stepper.ts";
+import type { Program } from "../program/program.ts";
+import type { Acceleration, Start, Stepper, Trajectory } from "../stepper.ts";
 import { checkAdvance, dimensionOf } from "./begin.ts";
 import { type Controller, makeController, power64 } from "./controller.ts";
-import { evaluateDense } from "./dense.ts";
+import type { Dense } from "./dense.ts";
 import { advanceTime, type Time, timeUntil } from "./double-double.ts";
+import type { Claims } from "./fixed-step.ts";
 
-export type PairClaims = Omit<
-  StepperInfo,
-  "evaluationsPerStep" | "startEvaluations" | "knob" | "uneven" | "denseOutput" | "selfStarting"
-> & { readonly embeddedOrder: number };
+export type PairClaims = Omit<Claims, "uneven"> & { readonly embeddedOrder: number };
 
 /** A variable-step stepper whose trial step is a straight-line program. */
 export interface PairStepper extends Stepper {
+  readonly embeddedOrder: number;
   pair(setting: Setting): PairProgram;
 }
 
-/** A variable-step stepper from an embedded pair. `dense`: rows of b_i(theta), lowest power first. */
+/** A variable-step stepper from an embedded pair, with or without dense output. */
 export function variableStep(
-  { embeddedOrder, ...claims }: PairClaims,
+  { embeddedOrder, stages, ...info }: PairClaims,
   build: (setting: Setting) => PairProgram,
-  dense: readonly (readonly number[])[] | null,
+  dense: (() => Dense) | null,
 ): PairStepper {
   const compiled = new Map<string, Compiled>();
-  const lowerOrder = Math.min(claims.order, embeddedOrder);
+  const lowerOrder = Math.min(info.order, embeddedOrder);
   return {
-    ...claims,
+    ...info,
     knob: "tolerance",
     uneven: true,
     denseOutput: dense !== null,
     selfStarting: true,
+    get stages() {
+      return stages();
+    },
     evaluationsPerStep: null,
     startEvaluations: null,
+    embeddedOrder,
     pair: build,
     begin(start: Start): Trajectory {
       const dimension = dimensionOf(start);
@@ -44,12 +48,15 @@ export function variableStep(
       const key = `${dimension} ${supplied}`;
       let pair = compiled.get(key);
       if (pair === undefined) {
-        const force = supplied ? suppliedForce : pointMass;
-        const program = build({ dimension, summation: "plain", force });
-        pair = { program, first: compile(program.first), trial: compile(program.trial) };
+        const setting: Setting = {
+          dimension,
+          summation: "plain",
+          force: supplied ? suppliedForce : pointMass,
+        };
+        pair = compilePair(build, dense, setting);
         compiled.set(key, pair);
       }
-      return new VariableStepRun(start, pair, lowerOrder, dense);
+      return new VariableStepRun(start, pair, lowerOrder);
     },
   };
 }
@@ -58,6 +65,25 @@ interface Compiled {
   readonly program: PairProgram;
   readonly first: Executable;
   readonly trial: Executable;
+  readonly dense: Dense | null;
+  readonly denseStages: { readonly program: Program; readonly run: Executable } | null;
+}
+
+function compilePair(
+  build: (setting: Setting) => PairProgram,
+  makeDense: (() => Dense) | null,
+  setting: Setting,
+): Compiled {
+  const program = build(setting);
+  const dense = makeDense?.() ?? null;
+  const stages = dense?.stages?.(setting) ?? null;
+  return {
+    program,
+    first: compile(program.first),
+    trial: compile(program.trial),
+    dense,
+    denseStages: stages === null ? null : { program: stages, run: compile(stages) },
+  };
 }
 
 const noForce = (): void => {};
@@ -83,13 +109,10 @@ class VariableStepRun implements Trajectory {
   readonly #timeBefore: Time = { hi: 0, lo: 0 };
   #lastStep = 0;
   #step: number;
+  /** The last step's slopes once something was interpolated, those that only dense output needs included. */
+  #slopes: Float64Array | null = null;
 
-  constructor(
-    start: Start,
-    pair: Compiled,
-    lowerOrder: number,
-    dense: readonly (readonly number[])[] | null,
-  ) {
+  constructor(start: Start, pair: Compiled, lowerOrder: number) {
     const d = dimensionOf(start);
     const { tolerance, endTime, summation = "plain" } = start;
     if (!(tolerance !== undefined && tolerance > 0 && tolerance < 1)) throw invalid.tolerance(tolerance);
@@ -112,6 +135,7 @@ class VariableStepRun implements Trajectory {
     this.#outputs = new Float64Array(pair.program.trial.outputs.length);
     this.#evaluateFirst();
     this.#step = Math.min(firstStep(this.#inputs, d, tolerance, lowerOrder), endTime[0]);
+    const { dense } = pair;
     if (dense !== null) this.interpolate = (hi, lo, out) => this.#interpolate(dense, hi, lo, out);
   }
 
@@ -159,6 +183,7 @@ class VariableStepRun implements Trajectory {
     this.#timeBefore.hi = this.#time.hi;
     this.#timeBefore.lo = this.#time.lo;
     this.#lastStep = h;
+    this.#slopes = null;
     if (last) Object.assign(this.#time, this.#end);
     else advanceTime(this.#time, h);
     if (!last || this.smallestStep === Number.POSITIVE_INFINITY)
@@ -175,12 +200,35 @@ class VariableStepRun implements Trajectory {
     this.evaluations += countEvaluations(this.#pair.program.first);
   }
 
-  #interpolate(dense: readonly (readonly number[])[], hi: number, lo: number, out: Float64Array): void {
+  #interpolate(dense: Dense, hi: number, lo: number, out: Float64Array): void {
     const since = timeUntil(this.#timeBefore, hi, lo);
     const theta = since / this.#lastStep;
     if (!(theta >= 0 && theta <= 1)) throw invalid.interpolationTime(hi);
-    const from = this.#width + 1 + (this.#pair.program.lastIsFirst ? this.#width / 2 : 0);
-    evaluateDense(dense, theta, this.#lastStep, this.#before, this.#outputs.subarray(from), out);
+    this.#slopes ??= this.#denseSlopes();
+    dense.interpolate(theta, this.#lastStep, this.#before, this.#slopes, out);
+  }
+
+  /** The step's slopes; with dense stages, velocities of all stages and then accelerations, the new state's and the added ones last. */
+  #denseSlopes(): Float64Array {
+    const width = this.#width;
+    const d = width / 2;
+    const { program, denseStages } = this.#pair;
+    const own = this.#outputs.subarray(width + 1 + (program.lastIsFirst ? d : 0));
+    if (denseStages === null) return own;
+    const inputs = Float64Array.of(...this.#before, ...this.#inputs.subarray(d), ...own);
+    const added = new Float64Array(denseStages.program.outputs.length);
+    denseStages.run.evaluate(this.#lastStep, inputs, added, this.#force, this.#scratch);
+    this.evaluations += countEvaluations(denseStages.program);
+    const half = own.length / 2;
+    const addedHalf = added.length / 2;
+    return Float64Array.of(
+      ...own.subarray(0, half),
+      ...this.#inputs.subarray(d, width),
+      ...added.subarray(0, addedHalf),
+      ...own.subarray(half),
+      ...this.#inputs.subarray(width),
+      ...added.subarray(addedHalf),
+    );
   }
 }
 

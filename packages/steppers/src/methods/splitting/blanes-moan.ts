@@ -1,0 +1,41 @@
+import type { Splitting } from "../method.ts";
+
+/**
+ * Digits: Published digits projected (minimum-norm Newton) onto the exact order-4 conditions; residual < 1.0e-60,
+ * largest change of a coefficient 3.5e-17, free parameters: 3.
+ */
+export const blanesMoan4: Splitting = {
+  id: "blanes-moan-4",
+  title: "Blanes–Moan 4",
+  order: 4,
+  source: "S. Blanes, P.C. Moan, J. Comput. Appl. Math. 142 (2002) 313-330 (Table 2)",
+  first: "drift",
+  symmetric: true,
+  weights: `
+    0.07920369643119566943366349588826887330802 0.2095151066133620212740726400295010169021
+    0.3531729060497739884810613115731210565304 -0.1438517731798180082751150578565277256482
+    -0.04206508035771953536811029830251703872041 0.4343366665664559870010424178270267087461
+    0.2193769557534997549067709816822542177640
+  `,
+};
+
+/**
+ * Digits: Published digits projected (minimum-norm Newton) onto the exact order-6 conditions; residual < 1.0e-60,
+ * largest change of a coefficient 1.4e-15, free parameters: 1.
+ */
+export const blanesMoan6: Splitting = {
+  id: "blanes-moan-6",
+  title: "Blanes–Moan 6",
+  order: 6,
+  source: "S. Blanes, P.C. Moan, J. Comput. Appl. Math. 142 (2002) 313-330 (Table 2)",
+  first: "drift",
+  symmetric: true,
+  weights: `
+    0.05026276440039268602122165440207410940601 0.1488164479010432319209010055355775888774
+    0.4135143004283438150630637201338844389753 -0.1323858657677836474488454265989399215745
+    0.04507988979439806296889705212451347116172 0.06730760469218445815025789659260104689936
+    -0.1880548538195689147991284889188705424878 0.4326664025781735975276679708835452980582
+    0.5419606784507801348314147409330724963482 -0.01640458940361764014998144641278401226045
+    -0.7255255585086915681709373573493479468067
+  `,
+};

@@ -8,7 +8,7 @@ import {
   runToEnd,
   stateAfter,
   stepper,
-} from "./support.ts";
+} from "./support/runs.ts";
 
 describe("end states of the methods, exact arithmetic (computed at 40 digits): e = 0.6, h = 1/32, 200 steps", () => {
   // Last column: how far a run in doubles was seen from the exact one; five times that is allowed, since operations may be ordered otherwise.

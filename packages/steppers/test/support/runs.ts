@@ -1,5 +1,11 @@
 import { expect } from "vitest";
-import { findStepper, type ProgramStepper, type Start, type Stepper, type Trajectory } from "../src/index.ts";
+import {
+  findStepper,
+  type ProgramStepper,
+  type Start,
+  type Stepper,
+  type Trajectory,
+} from "../../src/index.ts";
 
 /** Periapsis start, normalised units; in space the orbit is tilted about the x axis by the angle of cosine 0.6 and sine 0.8. */
 export function periapsis(e: number, dimension: 2 | 3 = 2): Float64Array {

@@ -7,6 +7,12 @@ export class InvalidInputError extends RangeError {
   }
 }
 
+/** A state as the checks below see it. */
+interface CheckedMotion {
+  readonly position: readonly number[];
+  readonly velocity: readonly number[];
+}
+
 /** Rules of the package's messages, in one place. */
 const rules = {
   finite: "must be a finite number",
@@ -19,6 +25,10 @@ const rules = {
   stepIndex: "must be an integer of magnitude at most 2^34",
   count: "must be an integer that is not negative",
   rows: "must have room for four numbers a row",
+  dimensions: "must have two or three components in position and velocity alike",
+  hyperbola: "must be finite and above 1",
+  parabolaSide: "must lie between the asymptotes (1 + e cos nu above zero)",
+  space: "must have three components",
   times: "must hold a high and a low word a time",
 } as const;
 
@@ -43,6 +53,19 @@ export function requireNonNegative(where: string, value: number): void {
 /** Throws unless `value` is the eccentricity of an ellipse. */
 export function requireEllipse(where: string, value: number): void {
   if (!(value >= 0 && value < 1)) throw new InvalidInputError(where, rules.ellipse, value);
+}
+
+/** Throws unless position and velocity are finite and both have two or both three components. */
+export function requireMotion(where: string, motion: CheckedMotion): void {
+  const { position, velocity } = motion;
+  const size = position.length;
+  if ((size !== 2 && size !== 3) || velocity.length !== size) {
+    throw new InvalidInputError(where, rules.dimensions, `${size} and ${velocity.length}`);
+  }
+  for (let k = 0; k < size; k++) {
+    requireFinite(`${where}.position[${k}]`, position[k]!);
+    requireFinite(`${where}.velocity[${k}]`, velocity[k]!);
+  }
 }
 
 /** Throws with the named rule of this package. */

@@ -16,18 +16,46 @@ export { ddArctangent2 } from "./arithmetic/double-double-arctangent.ts";
 export { type DoubleDoubleSinCos, ddSinCos, ddSinCosDegrees } from "./arithmetic/double-double-sin-cos.ts";
 export { twoProduct } from "./arithmetic/two-product.ts";
 export { quickTwoSum, twoSum } from "./arithmetic/two-sum.ts";
+// Conics in two and three dimensions
+export {
+  eccentricFromTrueAnomaly,
+  meanFromEccentricAnomaly,
+  trueFromEccentricAnomaly,
+  trueFromHyperbolicAnomaly,
+  trueFromParabolicAnomaly,
+} from "./conics/anomalies.ts";
+export {
+  type ClassicalElements,
+  elementsFromState,
+  type StateElements,
+  stateFromElements,
+} from "./conics/elements.ts";
+export { propagate } from "./conics/propagate.ts";
+export { type StumpffFunctions, stumpff } from "./conics/stumpff.ts";
 // Kepler's equation
 export { ddSolveKepler } from "./equation/double-double-solve.ts";
+export { solveBarker } from "./equation/solve-barker.ts";
+export { solveHyperbolicKepler } from "./equation/solve-hyperbolic-kepler.ts";
 export { solveKepler } from "./equation/solve-kepler.ts";
 export { InvalidInputError } from "./errors.ts";
 // Elementary functions, the same bits in every engine
 export { arctangent2 } from "./functions/arctangent.ts";
 export { cos, sin, sinCosInto } from "./functions/sin-cos.ts";
+// Pairs of bodies
+export {
+  joinTwoBodies,
+  propagateTwoBodies,
+  type RelativeMotion,
+  splitTwoBodies,
+  type TwoBodies,
+} from "./pair/two-bodies.ts";
 // Planar motion, normalised units
 export { type ExactState, exactState } from "./planar/exact-state.ts";
 export {
   angularMomentum,
   eccentricityVector,
+  invariantPlaces,
+  invariantsInto,
   type PlanarVector,
   specificEnergy,
 } from "./planar/invariants.ts";
@@ -45,13 +73,12 @@ export {
 } from "./planar/planar-state.ts";
 // Reference for scoring
 export { ReferenceTrack, referenceTrack } from "./track/reference-track.ts";
-// Units and pairs of bodies
+// Units
 export { type Normalisation, normalisation, type PhysicalScale } from "./units/normalisation.ts";
 export {
-  joinTwoBodies,
-  type Motion,
-  type RelativeMotion,
-  splitTwoBodies,
-  type TwoBodies,
-  type Vector,
-} from "./units/two-bodies.ts";
+  fromPeriapsisUnits,
+  type PeriapsisConvention,
+  periapsisConvention,
+  toPeriapsisUnits,
+} from "./units/periapsis-convention.ts";
+export type { Motion, Vector } from "./vector.ts";

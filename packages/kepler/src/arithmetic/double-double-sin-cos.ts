@@ -1,7 +1,6 @@
 import { halfPi, halfPiThird } from "./constants.ts";
 import {
   type DoubleDouble,
-  ddAdd,
   ddDivide,
   ddMultiply,
   ddNegate,
@@ -9,16 +8,8 @@ import {
   ddScale,
   ddSubtract,
 } from "./double-double.ts";
+import { reciprocalFactorial } from "./reciprocal-factorial.ts";
 import { twoProduct } from "./two-product.ts";
-
-/** 1/n! in double-double, n = 0 .. 29. */
-const reciprocalFactorials: readonly DoubleDouble[] = buildReciprocalFactorials();
-
-function buildReciprocalFactorials(): DoubleDouble[] {
-  const list: DoubleDouble[] = [ddOf(1)];
-  for (let n = 1; n < 30; n++) list.push(ddDivide(list[n - 1]!, ddOf(n)));
-  return list;
-}
 
 /** Sine and cosine of one angle in double-double. */
 export interface DoubleDoubleSinCos {
@@ -35,10 +26,10 @@ export function ddSinCos(x: DoubleDouble): DoubleDoubleSinCos {
   const hi = ddSubtract(x, twoProduct(halfPi.hi, q));
   const y = ddSubtract(ddSubtract(hi, twoProduct(halfPi.lo, q)), ddOf(halfPiThird * q));
   const y2 = ddMultiply(y, y);
-  let s = reciprocalFactorials[29]!;
-  for (let n = 27; n >= 1; n -= 2) s = ddSubtract(reciprocalFactorials[n]!, ddMultiply(s, y2));
-  let c = reciprocalFactorials[28]!;
-  for (let n = 26; n >= 0; n -= 2) c = ddSubtract(reciprocalFactorials[n]!, ddMultiply(c, y2));
+  let s = reciprocalFactorial(29);
+  for (let n = 27; n >= 1; n -= 2) s = ddSubtract(reciprocalFactorial(n), ddMultiply(s, y2));
+  let c = reciprocalFactorial(28);
+  for (let n = 26; n >= 0; n -= 2) c = ddSubtract(reciprocalFactorial(n), ddMultiply(c, y2));
   s = ddMultiply(s, y);
   const quadrant = ((q % 4) + 4) % 4;
   if (quadrant === 0) return { sin: s, cos: c };
@@ -67,12 +58,7 @@ export function ddSinCosDegrees(degrees: number): DoubleDoubleSinCos {
 export function ddMinusSin(x: DoubleDouble): DoubleDouble {
   if (Math.abs(x.hi) > 1) return ddSubtract(x, ddSinCos(x).sin);
   const x2 = ddMultiply(x, x);
-  let s = reciprocalFactorials[29]!;
-  for (let n = 27; n >= 3; n -= 2) s = ddSubtract(reciprocalFactorials[n]!, ddMultiply(s, x2));
+  let s = reciprocalFactorial(29);
+  for (let n = 27; n >= 3; n -= 2) s = ddSubtract(reciprocalFactorial(n), ddMultiply(s, x2));
   return ddMultiply(ddMultiply(s, x2), x);
-}
-
-/** a + b + c in double-double. */
-export function ddAdd3(a: DoubleDouble, b: DoubleDouble, c: DoubleDouble): DoubleDouble {
-  return ddAdd(ddAdd(a, b), c);
 }

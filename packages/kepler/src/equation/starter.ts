@@ -5,7 +5,7 @@ const words: Uint32Array = new Uint32Array(bits.buffer);
  * Cube root of a normal x > 0 to a relative 2e-5: a third of the exponent from the bits (little-endian, as every engine is), then one
  * step of Halley's iteration.
  */
-function roughCubeRoot(x: number): number {
+export function roughCubeRoot(x: number): number {
   bits[0] = x;
   words[1] = words[1]! * (1 / 3) + 715094163;
   words[0] = 0;

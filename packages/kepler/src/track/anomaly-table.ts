@@ -54,7 +54,7 @@ function middleOf(cell: number): number {
 
 /** Nearest anomaly with at most 7 bits, and no finer than 2^-7 of the scale of the passage. */
 function nodeNear(anomaly: number, scale: number): number {
-  const quantum = 2 ** (Math.floor(Math.log2(anomaly > scale ? anomaly : scale)) - 6);
+  const quantum = 2 ** (Math.floor(Math.log2(Math.max(anomaly, scale))) - 6);
   return Math.round(anomaly / quantum) * quantum;
 }
 
@@ -70,8 +70,8 @@ export function buildAnomalyTable(eccentricity: DoubleDouble): AnomalyTable {
   const rows = new Float64Array(count * cellSize);
   for (let k = 0; k < count; k++) {
     const mean = (middleOf(firstCell + k) - offset) * twoPi.hi;
-    const bounded = mean < 0 ? 0 : mean > Math.PI ? Math.PI : mean;
-    const node = anomalyNode(nodeNear(solveKepler(eccentricity.hi, bounded), scale < 1 ? scale : 1));
+    const bounded = mean < 0 ? 0 : Math.min(mean, Math.PI);
+    const node = anomalyNode(nodeNear(solveKepler(eccentricity.hi, bounded), Math.min(scale, 1)));
     const turns = ddMultiply(
       ddAdd(ddScale(complement, node.anomaly), ddMultiply(eccentricity, node.lag)),
       perTurn,

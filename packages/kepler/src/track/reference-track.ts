@@ -107,7 +107,7 @@ export class ReferenceTrack {
     const startHi = this.#startHi;
     const startLo = this.#startLo;
     for (let done = 0; done < count; done += blockSize) {
-      const size = count - done < blockSize ? count - done : blockSize;
+      const size = Math.min(count - done, blockSize);
       for (let j = 0; j < size; j++) {
         const k = firstStep + done + j;
         const p1 = k * w1;
@@ -136,7 +136,7 @@ export class ReferenceTrack {
     requireBatch("statesAtTimes", count, rows);
     if (times.length < 2 * count) refuse("statesAtTimes.times", "times", times.length);
     for (let done = 0; done < count; done += blockSize) {
-      const size = count - done < blockSize ? count - done : blockSize;
+      const size = Math.min(count - done, blockSize);
       for (let j = 0; j < size; j++) {
         this.#reduceTime(times[2 * (done + j)]!, times[2 * (done + j) + 1]!, j);
       }

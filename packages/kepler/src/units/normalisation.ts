@@ -1,3 +1,4 @@
+import { ddDivide, ddOf, ddSqrt, ddToNumber } from "../arithmetic/double-double.ts";
 import { requirePositive } from "../errors.ts";
 
 /** What fixes the units of a case: gravitational parameter in km^3/s^2 and the length that becomes 1, in km. */
@@ -23,15 +24,17 @@ export interface Normalisation {
 }
 
 /**
- * Units in which the gravitational parameter and the semi-major axis are 1: time a sqrt(a/GM), speed sqrt(GM/a).
+ * Units in which the gravitational parameter and the semi-major axis are 1: time a sqrt(a/GM), speed sqrt(GM/a), each rounded once.
+ * A value converted and converted back is within 1 ulp of itself.
  * @throws InvalidInputError unless both scales are finite and positive
  */
 export function normalisation(scale: PhysicalScale): Normalisation {
   requirePositive("normalisation.gravitationalParameterKm3S2", scale.gravitationalParameterKm3S2);
   requirePositive("normalisation.semiMajorAxisKm", scale.semiMajorAxisKm);
   const lengthKm = scale.semiMajorAxisKm;
-  const speedKmS = Math.sqrt(scale.gravitationalParameterKm3S2 / lengthKm);
-  const timeSeconds = lengthKm / speedKmS;
+  const speed = ddSqrt(ddDivide(ddOf(scale.gravitationalParameterKm3S2), ddOf(lengthKm)));
+  const speedKmS = ddToNumber(speed);
+  const timeSeconds = ddToNumber(ddDivide(ddOf(lengthKm), speed));
   return {
     lengthKm,
     timeSeconds,
@@ -40,7 +43,7 @@ export function normalisation(scale: PhysicalScale): Normalisation {
     lengthFromKm: (km) => km / lengthKm,
     timeToSeconds: (time) => time * timeSeconds,
     timeFromSeconds: (seconds) => seconds / timeSeconds,
-    speedToKmS: (speed) => speed * speedKmS,
+    speedToKmS: (speedNormalised) => speedNormalised * speedKmS,
     speedFromKmS: (kmS) => kmS / speedKmS,
   };
 }

@@ -53,6 +53,8 @@ export interface Start {
   readonly tolerance?: number;
   /** Where the knob is `tolerance`: the end time as an unevaluated sum hi + lo; the last step lands on it exactly. */
   readonly endTime?: readonly [hi: number, lo: number];
+  /** Where the knob is `tolerance`: no step is longer than this; no bound where absent. */
+  readonly maxStep?: number;
   /** Default `plain`. */
   readonly summation?: Summation;
   /** Default: the point mass, a = -q / r^3. */

@@ -108,13 +108,14 @@ class VariableStepRun implements Trajectory {
   readonly #before: Float64Array;
   readonly #timeBefore: Time = { hi: 0, lo: 0 };
   #lastStep = 0;
+  readonly #longest: number;
   #step: number;
   /** The last step's slopes once something was interpolated, those that only dense output needs included. */
   #slopes: Float64Array | null = null;
 
   constructor(start: Start, pair: Compiled, lowerOrder: number) {
     const d = dimensionOf(start);
-    const { tolerance, endTime, summation = "plain" } = start;
+    const { tolerance, endTime, maxStep = Number.POSITIVE_INFINITY, summation = "plain" } = start;
     if (!(tolerance !== undefined && tolerance > 0 && tolerance < 1)) throw invalid.tolerance(tolerance);
     if (
       !(endTime !== undefined && endTime[0] > 0 && Number.isFinite(endTime[0]) && Number.isFinite(endTime[1]))
@@ -122,6 +123,8 @@ class VariableStepRun implements Trajectory {
       throw invalid.endTime(endTime);
     }
     if (summation !== "plain") throw invalid.summation(summation);
+    if (!(maxStep > 0)) throw invalid.maxStep(maxStep);
+    this.#longest = maxStep;
     this.#pair = pair;
     this.#width = 2 * d;
     this.#force = start.acceleration ?? noForce;
@@ -134,7 +137,7 @@ class VariableStepRun implements Trajectory {
     this.#before = start.state.slice();
     this.#outputs = new Float64Array(pair.program.trial.outputs.length);
     this.#evaluateFirst();
-    this.#step = Math.min(firstStep(this.#inputs, d, tolerance, lowerOrder), endTime[0]);
+    this.#step = Math.min(firstStep(this.#inputs, d, tolerance, lowerOrder), endTime[0], maxStep);
     const { dense } = pair;
     if (dense !== null) this.interpolate = (hi, lo, out) => this.#interpolate(dense, hi, lo, out);
   }
@@ -168,7 +171,7 @@ class VariableStepRun implements Trajectory {
       const error = finite && ratio >= 0 ? ratio : Number.POSITIVE_INFINITY;
       if (error <= 1 || hopeless || h <= smallest) {
         this.#accept(h, last);
-        this.#step = h * this.#controller.accepted(Math.min(error, 1), rejected);
+        this.#step = Math.min(this.#longest, h * this.#controller.accepted(Math.min(error, 1), rejected));
         return;
       }
       rejected = true;

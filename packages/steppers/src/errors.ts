@@ -14,6 +14,7 @@ export const invalid = {
   step: (got: number): InvalidInputError => rule("start.step", "must be finite and not zero", got),
   tolerance: (got: unknown): InvalidInputError => rule("start.tolerance", "must be in (0, 1)", got),
   endTime: (got: unknown): InvalidInputError => rule("start.endTime", "must be finite and positive", got),
+  maxStep: (got: unknown): InvalidInputError => rule("start.maxStep", "must be positive", got),
   summation: (got: string): InvalidInputError =>
     rule("start.summation", "must be plain for this stepper", got),
   maxSteps: (got: number): InvalidInputError =>

@@ -15,7 +15,8 @@ export type LimitKey = (typeof LIMIT_KEYS)[number];
 
 /** The worst value met against one limit, and the cell that produced it; `score` re-runs that cell to the same digits. */
 export interface LimitError {
-  readonly value: number;
+  /** Null where the run diverged or the measure is not defined: the limit then counts as exceeded, with factor 0. */
+  readonly value: number | null;
   readonly limit: number;
   /** limit / value: above 1 the limit holds. */
   readonly factor: number;

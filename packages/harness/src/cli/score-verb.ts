@@ -4,7 +4,7 @@ import { loadOwnSteppers } from "../run/own-steppers.ts";
 import { runCell } from "../run/run-cell.ts";
 import { FULL_PLAN } from "../score/run-scorer.ts";
 import { type Cell, MEASURES, type Score, type Summation } from "../score/score.ts";
-import { scientific } from "./format.ts";
+import { scientific } from "../text/numbers.ts";
 import { brokenLimits, options, requireKnob, type ScoreLimit } from "./options.ts";
 import { EXIT, type Outcome } from "./run-command-line.ts";
 import { table } from "./table.ts";

@@ -101,7 +101,7 @@ function axisRatio(e: DoubleDouble): DoubleDouble {
 function exactState(orbit: ExactOrbit, time: DoubleDouble): ExactState {
   const { eccentricity: e, semiMajorAxis: a, meanMotion, startMeanAnomaly, px, py } = orbit;
   const mean = ddAdd(startMeanAnomaly, ddMultiply(meanMotion, time));
-  const reduced = ddSubtract(mean, ddScale(twoPi, Math.round(mean.hi / twoPi.hi)));
+  const reduced = ddSubtract(mean, ddScale(twoPi, Math.ceil(mean.hi / twoPi.hi - 0.5)));
   const eccentricAnomaly = ddSolveKepler(e, reduced);
   const { sin, cos } = ddSinCos(eccentricAnomaly);
   const ratio = axisRatio(e);

@@ -1,0 +1,196 @@
+import { findStepper, type Stepper, type StepperInfo } from "@perigauge/steppers";
+import type { CellPool } from "../run/cell-pool.ts";
+import type { Scenario } from "../scenario/scenario.ts";
+import { threeDigits } from "../text/numbers.ts";
+import { type Candidate, type ChoiceContext, makeCandidate } from "./candidate.ts";
+import { cautionsOf } from "./cautions.ts";
+import type { Choice, CurrentChoice, ExcludedStepper, RankedStepper } from "./choice.ts";
+import { assessCurrent } from "./current.ts";
+import { digestOf } from "./digest.ts";
+import { buildFleet } from "./fleet.ts";
+import { limitsOf } from "./limits.ts";
+import { Measurer } from "./measure.ts";
+import { failedEntry, rankedRun, rankedScreening } from "./ranked.ts";
+import { unmetRequirement } from "./requirements.ts";
+import { type Screened, type Screening, screen } from "./screen.ts";
+import { type Found, findCliff, search } from "./search.ts";
+import { verify } from "./verify.ts";
+import { whatWouldHaveToGive } from "./what-would-have-to-give.ts";
+import { explainRanking } from "./why.ts";
+
+/** Phases of a choice, in order; reported as they begin. */
+export type Phase = "screening" | "search" | "verification" | "current";
+
+export interface ChooseOptions {
+  readonly pool: CellPool;
+  /** Candidates; steppers of one's own among them. */
+  readonly steppers: readonly Stepper[];
+  readonly seed: number;
+  readonly version: string;
+  readonly command: string;
+  readonly now: () => number;
+  readonly onPhase?: (phase: Phase, detail: string) => void;
+}
+
+/** A screened stepper with what its search found, for the report. */
+export interface Tried {
+  readonly candidate: Candidate;
+  readonly screening: Screening;
+}
+
+export interface ChoiceRun {
+  readonly choice: Choice;
+  readonly context: ChoiceContext;
+  readonly tried: readonly Tried[];
+}
+
+/** Steppers whose screened cost is over this many times the best are not run in full... */
+const WORTH_RUNNING = 3.5;
+/** ... nor are those that come after so many cheaper ones that were; the screened cost is good to about this share. */
+const RUN_IN_FULL = 5;
+const SCREENING_ERROR = 0.12;
+/** A screened cost this far above a cap on evaluations excludes without a run in full; nearer, the run decides. */
+const CERTAINLY_OVER = 1.3;
+
+/**
+ * The main job: for every stepper the largest step whose errors hold every limit over the whole duration, fleet and band of steps, found
+ * by search and then run in full; ranked by force evaluations.
+ */
+export async function chooseStepper(scenario: Scenario, options: ChooseOptions): Promise<ChoiceRun> {
+  const { pool, now } = options;
+  const began = now();
+  const fleet = buildFleet(scenario);
+  const limits = limitsOf(scenario.limits);
+  const measurer = new Measurer(pool, limits, fleet.durationSeconds);
+  const designFactor = scenario.designFactor ?? 2;
+  const context: ChoiceContext = { scenario, fleet, measurer, designFactor, seed: options.seed };
+  const excluded: ExcludedStepper[] = [];
+  const seconds = { screening: 0, search: 0, verification: 0 };
+  const timed = async <T>(phase: keyof typeof seconds, work: () => Promise<T>): Promise<T> => {
+    const from = now();
+    const result = await work();
+    seconds[phase] += (now() - from) / 1000;
+    return result;
+  };
+
+  const suitable = options.steppers.filter((stepper) => {
+    const unmet = unmetRequirement(stepper, scenario.require);
+    if (unmet !== null) excluded.push(unmet);
+    return unmet === null;
+  });
+  const cap = scenario.require?.evaluationsPerOrbit ?? Number.POSITIVE_INFINITY;
+  options.onPhase?.("screening", `${suitable.length} steppers`);
+  const tried = await timed("screening", () =>
+    Promise.all(
+      suitable.map(async (stepper): Promise<Tried> => {
+        const candidate = makeCandidate(stepper, context);
+        return { candidate, screening: await screen(context, candidate, Math.min(65_536, 4 * cap)) };
+      }),
+    ),
+  );
+
+  const hopeful: { tried: Tried; estimate: Screened }[] = [];
+  for (const entry of tried) {
+    const { estimate } = entry.screening;
+    if (estimate === null) excluded.push(failedEntry(context, entry.candidate, entry.screening, null));
+    else if (estimate.evaluationsPerOrbit > cap * CERTAINLY_OVER) {
+      excluded.push(
+        overCap(entry.candidate.stepper, estimate.evaluationsPerOrbit, cap, "extrapolated from short runs"),
+      );
+    } else hopeful.push({ tried: entry, estimate });
+  }
+  hopeful.sort((a, b) => a.estimate.evaluationsPerOrbit - b.estimate.evaluationsPerOrbit);
+
+  const ranking: RankedStepper[] = [];
+  const costs: number[] = [];
+  const worthRunning = (cost: number): boolean => {
+    const cheaper = costs.toSorted((a, b) => a - b);
+    const [best] = cheaper;
+    const last = cheaper[RUN_IN_FULL - 1];
+    if (best !== undefined && cost > best * WORTH_RUNNING) return false;
+    return last === undefined || cost * (1 - SCREENING_ERROR) <= last;
+  };
+  for (const { tried: entry, estimate } of hopeful) {
+    const { candidate } = entry;
+    const { id } = candidate.stepper;
+    if (!worthRunning(estimate.evaluationsPerOrbit)) {
+      ranking.push(rankedScreening(context, candidate, estimate));
+      continue;
+    }
+    options.onPhase?.("search", id);
+    const found: Found = await timed("search", () => search(context, candidate, estimate.fineness));
+    if (found.fineness === null) {
+      excluded.push(failedEntry(context, candidate, entry.screening, found));
+      continue;
+    }
+    options.onPhase?.("verification", id);
+    const hard = [...found.worstSamples];
+    const verified = await timed("verification", () =>
+      verify(context, candidate, found.fineness as number, hard),
+    );
+    if (verified === null) {
+      excluded.push(failedEntry(context, candidate, entry.screening, found));
+      continue;
+    }
+    const cliff = await timed("search", () => findCliff(context, candidate, verified.fineness, hard));
+    const ranked = rankedRun(context, candidate, verified, cliff);
+    if (ranked.evaluationsPerOrbit > cap) {
+      excluded.push(overCap(candidate.stepper, ranked.evaluationsPerOrbit, cap, "run in full"));
+      continue;
+    }
+    costs.push(ranked.evaluationsPerOrbit);
+    ranking.push(ranked);
+  }
+  ranking.sort((a, b) => rankKey(a) - rankKey(b) || a.stepper.localeCompare(b.stepper));
+  const explained = explainRanking(ranking);
+  const winner = explained.find((entry) => entry.evidence === "run") ?? null;
+
+  let current: CurrentChoice | null = null;
+  if (scenario.current !== undefined) {
+    options.onPhase?.("current", scenario.current.stepper);
+    const stepper =
+      options.steppers.find(({ id }) => id === scenario.current?.stepper) ??
+      findStepper(scenario.current.stepper);
+    current = await timed("verification", () => assessCurrent(context, stepper as Stepper, winner));
+  }
+
+  const body = {
+    format: "perigauge-choice/1",
+    scenario,
+    choice: winner?.stepper ?? null,
+    ranking: explained,
+    current,
+    excluded,
+    whatWouldHaveToGive: winner === null ? whatWouldHaveToGive(context, tried, excluded) : [],
+    cautions: cautionsOf(context, winner, explained),
+  } as const;
+  const choice: Choice = {
+    ...body,
+    provenance: {
+      version: options.version,
+      node: process.version,
+      command: options.command,
+      seed: options.seed,
+      digest: digestOf(body),
+      cellsRun: pool.cellsRun,
+      seconds: { ...seconds, total: (now() - began) / 1000 },
+    },
+  };
+  return { choice, context, tried };
+}
+
+/** What was run in full ranks before what was only screened. */
+function rankKey(entry: RankedStepper): number {
+  return entry.evaluationsTotal + (entry.evidence === "run" ? 0 : Number.MAX_SAFE_INTEGER);
+}
+
+function overCap(stepper: StepperInfo, needed: number, cap: number, how: string): ExcludedStepper {
+  const rounded = Math.round(needed);
+  return {
+    stepper: stepper.id,
+    reason: `needs ${rounded} force evaluations per orbit (${how}), ${threeDigits(needed / cap)} times the ${cap} allowed`,
+    limit: "evaluationsPerOrbit",
+    value: rounded,
+    allowed: cap,
+  };
+}

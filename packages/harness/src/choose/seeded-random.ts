@@ -1,0 +1,10 @@
+/** Uniform numbers in [0, 1) from a seed: a 32-bit Weyl sequence through two rounds of an integer mixing function. Not for secrets. */
+export function seededRandom(seed: number): () => number {
+  let state = seed >>> 0;
+  return () => {
+    state = (state + 0x9e3779b9) >>> 0;
+    let mixed = Math.imul(state ^ (state >>> 16), 0x85ebca6b);
+    mixed = Math.imul(mixed ^ (mixed >>> 13), 0xc2b2ae35);
+    return ((mixed ^ (mixed >>> 16)) >>> 0) / 2 ** 32;
+  };
+}

@@ -34,7 +34,7 @@ function solveHalfTurn(e: number, mean: number, meanLow: number): number {
   const complement = 1 - e;
   const complementLow = 1 - complement - e;
   if (mean < 0.03125 * complement + 5.08e-6 * e) {
-    return mean > 0 ? smallAnomaly(e, complement, complementLow, mean, meanLow) : 0;
+    return mean > 0 ? smallAnomaly(e, complement, complementLow, mean, meanLow) : mean;
   }
   bits[0] = startAnomaly(e, complement, mean);
   const at = 8 * (((words[1]! + 8192) >>> 14) - ((1023 + firstExponent) << 6));
@@ -87,6 +87,7 @@ const reduced: Float64Array = new Float64Array(2);
 export function solveKepler(eccentricity: number, meanAnomaly: number): number {
   requireEllipse("solveKepler.eccentricity", eccentricity);
   requireFinite("solveKepler.meanAnomaly", meanAnomaly);
+  if (meanAnomaly === 0) return meanAnomaly;
   if (!ready) buildNodes();
   let hi = meanAnomaly;
   let lo = 0;

@@ -27,6 +27,8 @@ export interface CostPoint {
   readonly worstRatio: number;
   readonly bindingLimit: string;
   readonly evidence: "run" | "extrapolated";
+  /** The command that measures the worst cell of this point again. */
+  readonly command?: string | undefined;
 }
 
 export interface SurveyPoint {
@@ -36,6 +38,8 @@ export interface SurveyPoint {
   readonly eccentricity: number;
   readonly stepsPerOrbit: number | null;
   readonly tolerance: number | null;
+  /** Steps really taken, per orbit: places a variable-step stepper on an axis of steps per orbit. */
+  readonly meanStepsPerOrbit?: number | undefined;
   readonly evaluationsPerOrbit: number;
   /** Largest absolute phase error, rad; energy error, relative; period error, relative. */
   readonly phase: number | null;

@@ -1,0 +1,121 @@
+import { logAxis } from "../axes/log-axis.ts";
+import type { Chart } from "../chart.ts";
+import type { ChoiceEvidence, CostPoint } from "../evidence.ts";
+import type { Looks } from "../look/stepper-look.ts";
+import { formatCount, formatNumber, formatTimes } from "../text/number.ts";
+import { limitWords, plural } from "../text/words.ts";
+import { makeChart } from "./make-chart.ts";
+import { mutedNote } from "./muted-note.ts";
+import { levelLayers, type Quantity, seriesLayers } from "./series-layers.ts";
+
+/** Which stepper buys the limits cheapest? Largest error over its limit against force evaluations per orbit, limit and design line drawn in. */
+export function errorAgainstCost(evidence: ChoiceEvidence, looks: Looks): Chart {
+  const points = evidence.costPoints;
+  const designFactor = evidence.choice.scenario.designFactor ?? 2;
+  const x: Quantity = {
+    field: "evaluationsPerOrbit",
+    title: "force evaluations per orbit",
+    axis: logAxis(
+      points.map((point) => point.evaluationsPerOrbit),
+      0.05,
+    ),
+  };
+  const y: Quantity = {
+    field: "worstRatio",
+    title: "largest error over its limit",
+    axis: logAxis([...points.map((point) => point.worstRatio), 1, 1 / designFactor]),
+  };
+  const rows = points.map((point) => ({
+    stepper: point.stepper,
+    symplectic: point.symplectic,
+    evaluationsPerOrbit: point.evaluationsPerOrbit,
+    worstRatio: point.worstRatio,
+    knob: knobOf(point),
+    bindingLimit: limitWords(point.bindingLimit),
+    evidence: point.evidence,
+    command: point.command ?? "",
+    ended: "completed",
+  }));
+  const layers = [
+    ...levelLayers(y, 1, "limit", { dash: [1, 0], side: "above" }),
+    ...(designFactor > 1
+      ? levelLayers(y, 1 / designFactor, `limit ÷ ${formatNumber(designFactor)}, the design line`, {
+          dash: [6, 4],
+          side: "below" as const,
+        })
+      : []),
+    ...seriesLayers(x, y, looks, [
+      { field: "stepper", title: "stepper" },
+      { field: "knob", title: "step" },
+      { field: "evaluationsPerOrbit", title: "force evaluations per orbit", format: ".4e" },
+      { field: "worstRatio", title: "largest error over its limit", format: ".3e" },
+      { field: "bindingLimit", title: "binding limit" },
+      { field: "evidence", title: "evidence" },
+      ...(points.some((point) => point.command !== undefined)
+        ? [{ field: "command", title: "command" }]
+        : []),
+    ]),
+  ];
+  return makeChart({
+    name: "error-against-cost",
+    section: "cost",
+    title: findingOf(evidence),
+    description: `Largest error over its limit (vertical, logarithmic) against force evaluations per orbit (horizontal, logarithmic), for ${plural(
+      new Set(points.map((point) => point.stepper)).size,
+      "stepper",
+    )} at ${plural(points.length, "step or tolerance", "steps or tolerances")}. Below the whole line at 1 every limit holds; below the dashed line each holds ${formatNumber(
+      designFactor,
+    )} times over. Further left is cheaper. ${nearestWords(evidence)}`,
+    note: mutedNote(looks),
+    height: 380,
+    rows,
+    layers,
+  });
+}
+
+function findingOf(evidence: ChoiceEvidence): string {
+  const { choice } = evidence;
+  const [first, second] = choice.ranking;
+  if (choice.choice === null || first === undefined) {
+    const best = nearest(evidence.costPoints);
+    return best === undefined
+      ? "No stepper could be measured against the limits"
+      : `No stepper tried holds every limit as asked: ${best.stepper} comes nearest, at ${formatNumber(best.worstRatio)} of the limit`;
+  }
+  const chosen = choice.ranking.find((ranked) => ranked.stepper === choice.choice) ?? first;
+  const others =
+    second === undefined || second === chosen
+      ? ""
+      : `, ${second.stepper} needs ${formatTimes(second.evaluationsTotal / chosen.evaluationsTotal)} times as many in all`;
+  return `${chosen.stepper} holds every limit with ${formatCount(chosen.evaluationsPerOrbit)} force evaluations per orbit${others}`;
+}
+
+/** Where each curve first comes below the limit, cheapest first. */
+function nearestWords(evidence: ChoiceEvidence): string {
+  const cheapest = new Map<string, CostPoint>();
+  for (const point of evidence.costPoints) {
+    const known = cheapest.get(point.stepper);
+    if (
+      point.worstRatio <= 1 &&
+      (known === undefined || point.evaluationsPerOrbit < known.evaluationsPerOrbit)
+    ) {
+      cheapest.set(point.stepper, point);
+    }
+  }
+  const words = [...cheapest.values()]
+    .sort((a, b) => a.evaluationsPerOrbit - b.evaluationsPerOrbit)
+    .slice(0, 5)
+    .map((point) => `${point.stepper} ${formatCount(point.evaluationsPerOrbit)}`);
+  return words.length === 0
+    ? "No point lies below the limit."
+    : `Fewest evaluations per orbit at a point below the limit: ${words.join(", ")}.`;
+}
+
+function nearest(points: readonly CostPoint[]): CostPoint | undefined {
+  return [...points].sort((a, b) => a.worstRatio - b.worstRatio)[0];
+}
+
+function knobOf(point: CostPoint): string {
+  if (point.stepsPerOrbit !== null) return `${formatNumber(point.stepsPerOrbit, 5)} steps per orbit`;
+  return `tolerance ${formatNumber(point.tolerance)}`;
+}

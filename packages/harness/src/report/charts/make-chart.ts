@@ -1,0 +1,44 @@
+import type { TopLevelSpec } from "vega-lite";
+import type { Chart } from "../chart.ts";
+import { chartConfig } from "../look/chart-config.ts";
+import { wrapWords } from "../text/wrap.ts";
+
+/** One layer of a layered specification. */
+export type Layer = Extract<TopLevelSpec, { layer: unknown }>["layer"][number];
+
+/** A row of inline data. */
+export type Row = Readonly<Record<string, string | number | boolean | null>>;
+
+export interface ChartParts extends Omit<Chart, "spec"> {
+  readonly height: number;
+  readonly rows: readonly Row[];
+  readonly layers: readonly Layer[];
+}
+
+const SCHEMA = "https://vega.github.io/schema/vega-lite/v6.json";
+const WIDTH = 780;
+const TITLE_CHARACTERS = 78;
+const NOTE_CHARACTERS = 112;
+
+/** Put a chart's parts into a specification that stands alone: data inline, title and look included. */
+export function makeChart(parts: ChartParts): Chart {
+  const { name, title, description, note, section } = parts;
+  return {
+    name,
+    title,
+    description,
+    note,
+    section,
+    spec: {
+      $schema: SCHEMA,
+      description,
+      title: { text: wrapWords(title, TITLE_CHARACTERS), subtitle: wrapWords(note, NOTE_CHARACTERS) },
+      width: WIDTH,
+      height: parts.height,
+      autosize: { type: "fit-x", contains: "padding" },
+      config: chartConfig,
+      data: { values: parts.rows.map((row) => ({ ...row })) },
+      layer: [...parts.layers],
+    },
+  };
+}

@@ -1,0 +1,69 @@
+import type { Spec } from "vega";
+import type { TopLevelSpec } from "vega-lite";
+import type { Chart, ChartSection } from "../chart.ts";
+import { withColourVariables } from "../look/palette.ts";
+import { compileSpec } from "../render/to-svg.ts";
+import { html, type Markup } from "../text/html.ts";
+
+const SECTIONS: readonly {
+  readonly section: ChartSection;
+  readonly heading: string;
+  readonly wide: boolean;
+}[] = [
+  { section: "cost", heading: "What does holding the limits cost?", wide: true },
+  { section: "duration", heading: "How do the errors grow over the duration?", wide: false },
+  { section: "eccentricity", heading: "How do the errors grow with eccentricity?", wide: false },
+  { section: "step", heading: "How do the errors fall with the step?", wide: false },
+  { section: "orbit", heading: "Is the orbit resolved?", wide: true },
+];
+
+/** Charts by question. */
+export function figures(charts: readonly Chart[], drawingOf: (name: string) => Markup): Markup[] {
+  return SECTIONS.flatMap(({ section, heading, wide }) => {
+    const own = charts.filter((chart) => chart.section === section);
+    if (own.length === 0) return [];
+    return [
+      html`<h3>${heading}</h3><div class="figures${wide ? " wide" : ""}">${own.map((chart) => figure(chart, drawingOf(chart.name)))}</div>`,
+    ];
+  });
+}
+
+function figure(chart: Chart, drawing: Markup): Markup {
+  const id = `chart-${chart.name}`;
+  return html`<figure id="${id}"><h4 id="${id}-title">${chart.title}</h4>
+<div class="drawing" role="img" aria-labelledby="${id}-title" aria-describedby="${id}-text" data-chart="${chart.name}">${drawing}</div>
+<figcaption id="${id}-text">${chart.description} ${chart.note}</figcaption></figure>
+`;
+}
+
+/** What the page's script draws: compiled charts, whose data tables are pooled because several charts share one. */
+export interface PageCharts {
+  readonly charts: readonly { readonly name: string; readonly spec: Spec }[];
+  readonly tables: readonly unknown[];
+}
+
+export function pageCharts(charts: readonly Chart[]): PageCharts {
+  const tables: unknown[] = [];
+  const places = new Map<string, number>();
+  const pooled = charts.map((chart) => {
+    const spec = JSON.parse(withColourVariables(JSON.stringify(compileSpec(pageSpec(chart.spec))))) as Spec;
+    for (const data of spec.data ?? []) {
+      if (!("values" in data)) continue;
+      const key = JSON.stringify(data.values);
+      const place = places.get(key) ?? tables.push(data.values) - 1;
+      places.set(key, place);
+      Object.assign(data, { values: place });
+    }
+    return { name: chart.name, spec };
+  });
+  return { charts: pooled, tables };
+}
+
+/** On the page a chart's title is a heading and the steppers' legend stands above all charts. */
+export function pageSpec(spec: TopLevelSpec): TopLevelSpec {
+  const { title: _title, ...rest } = spec;
+  return {
+    ...rest,
+    config: { ...spec.config, legend: { ...spec.config?.legend, disable: true } },
+  } as TopLevelSpec;
+}

@@ -1,0 +1,51 @@
+import { parse, resetSVGDefIds, type Spec, View } from "vega";
+import { compile, type TopLevelSpec } from "vega-lite";
+import type { Chart } from "../chart.ts";
+import { escapeText } from "../text/html.ts";
+import { useFontWidths } from "./text-widths.ts";
+
+interface Logger {
+  readonly level: () => Logger;
+  readonly error: (...messages: readonly unknown[]) => Logger;
+  readonly warn: (...messages: readonly unknown[]) => Logger;
+  readonly info: () => Logger;
+  readonly debug: () => Logger;
+}
+
+/** The chart language of the specification, compiled to that of the runtime. Warnings of the compiler are errors here. */
+export function compileSpec(spec: TopLevelSpec): Spec {
+  const warnings: string[] = [];
+  const logger: Logger = {
+    level: () => logger,
+    error: (...messages) => logger.warn(...messages),
+    warn: (...messages) => {
+      warnings.push(messages.join(" "));
+      return logger;
+    },
+    info: () => logger,
+    debug: () => logger,
+  };
+  const compiled = compile(spec, { logger: logger as never }).spec;
+  if (warnings.length > 0) throw new Error(`chart specification: ${warnings.join("; ")}`);
+  return compiled;
+}
+
+/** The chart as a drawing that stands alone, with its title and text alternative as the drawing's own. */
+export async function toSvg(chart: Chart): Promise<string> {
+  const svg = await drawSpec(compileSpec(chart.spec), chart.name);
+  return svg.replace(
+    /^<svg([^>]*)>/,
+    (_, attributes: string) =>
+      `<svg${attributes} role="img"><title>${escapeText(chart.title)}</title><desc>${escapeText(chart.description)}</desc>`,
+  );
+}
+
+/** Draw a compiled chart; ids inside start with `name`, so that several drawings fit on one page. The same input gives the same bytes. */
+export async function drawSpec(spec: Spec, name: string): Promise<string> {
+  useFontWidths();
+  resetSVGDefIds();
+  const view = new View(parse(spec), { renderer: "none" });
+  const svg = await view.toSVG();
+  view.finalize();
+  return svg.replace(/(\bid="|url\(#)(?=[a-z]+_?\d)/g, `$1${name}-`);
+}

@@ -1,0 +1,70 @@
+import { LIMIT_KEYS, type LimitKey } from "../../choose/choice.ts";
+import type { Scenario } from "../../scenario/scenario.ts";
+import { formatCount, formatNumber } from "./number.ts";
+
+const LIMIT_WORDS: Readonly<Record<LimitKey, { readonly words: string; readonly unit: string }>> = {
+  alongTrackKm: { words: "position along the track", unit: "km" },
+  radialKm: { words: "radial position", unit: "km" },
+  positionKm: { words: "position", unit: "km" },
+  timingSeconds: { words: "time of periapsis passage", unit: "s" },
+  semiMajorAxisM: { words: "semi-major axis", unit: "m" },
+  apsisDeg: { words: "direction of periapsis", unit: "°" },
+  phaseRad: { words: "phase", unit: "rad" },
+  energyRelative: { words: "energy, relative", unit: "" },
+};
+
+/** A limit's key, with or without horizon (`alongTrackKm@7`), in words. */
+export function limitWords(key: string): string {
+  const [name = "", days] = key.split("@");
+  const words = isLimitKey(name) ? LIMIT_WORDS[name].words : name;
+  return days === undefined ? words : `${words}, first ${dayWords(Number(days))}`;
+}
+
+export function limitUnit(key: string): string {
+  const [name = ""] = key.split("@");
+  return isLimitKey(name) ? LIMIT_WORDS[name].unit : "";
+}
+
+/** A value of a limit with its unit; null where it has none (a run that diverged, a measure that is not defined). */
+export function limitValue(key: string, value: number | null): string {
+  if (value === null) return "not defined";
+  const unit = limitUnit(key);
+  return unit === "°" ? `${formatNumber(value)}°` : withUnit(formatNumber(value), unit);
+}
+
+export function dayWords(days: number): string {
+  return days === 1 ? "1 day" : `${formatNumber(days)} days`;
+}
+
+export function durationWords(scenario: Scenario): string {
+  return "days" in scenario.duration
+    ? dayWords(scenario.duration.days)
+    : `${formatCount(scenario.duration.orbits)} orbits`;
+}
+
+/** The knob of a stepper: its step in seconds, or its tolerance. */
+export function knobWords(knob: {
+  readonly stepSeconds: number | null;
+  readonly tolerance: number | null;
+}): string {
+  if (knob.stepSeconds !== null) return withUnit(formatNumber(knob.stepSeconds, 5), "s");
+  return knob.tolerance === null ? "–" : `tolerance ${formatNumber(knob.tolerance)}`;
+}
+
+export function plural(count: number, one: string, many = `${one}s`): string {
+  return `${formatCount(count)} ${count === 1 ? one : many}`;
+}
+
+/** `a`, `a and b`, `a, b and c`. */
+export function listWords(items: readonly string[]): string {
+  if (items.length < 2) return items.join("");
+  return `${items.slice(0, -1).join(", ")} and ${items.at(-1)}`;
+}
+
+function withUnit(text: string, unit: string): string {
+  return unit === "" ? text : `${text} ${unit}`;
+}
+
+function isLimitKey(name: string): name is LimitKey {
+  return (LIMIT_KEYS as readonly string[]).includes(name);
+}

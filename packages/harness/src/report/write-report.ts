@@ -1,0 +1,37 @@
+import { mkdir, writeFile } from "node:fs/promises";
+import { join } from "node:path";
+import type { Chart } from "./chart.ts";
+import { describeCharts } from "./describe-charts.ts";
+import type { ChoiceEvidence } from "./evidence.ts";
+import { pageSpec } from "./page/figures.ts";
+import { renderPage } from "./page/render-page.ts";
+import { toPng } from "./render/to-png.ts";
+import { compileSpec, drawSpec, toSvg } from "./render/to-svg.ts";
+
+/**
+ * Write `report.html` and `charts/NAME.vl.json`, `.svg` and `.png` into a folder that exists, with further files (name to content) beside them.
+ * The same evidence gives the same bytes.
+ */
+export async function writeReport(
+  directory: string,
+  evidence: ChoiceEvidence,
+  extraFiles: Readonly<Record<string, string | Uint8Array>> = {},
+): Promise<void> {
+  const charts = describeCharts(evidence);
+  const folder = join(directory, "charts");
+  await mkdir(folder, { recursive: true });
+  const drawings = new Map<string, string>();
+  for (const chart of charts) {
+    drawings.set(chart.name, await drawSpec(compileSpec(pageSpec(chart.spec)), chart.name));
+    await writeChart(folder, chart);
+  }
+  await writeFile(join(directory, "report.html"), renderPage(evidence, charts, drawings));
+  for (const [name, content] of Object.entries(extraFiles)) await writeFile(join(directory, name), content);
+}
+
+async function writeChart(folder: string, chart: Chart): Promise<void> {
+  const svg = await toSvg(chart);
+  await writeFile(join(folder, `${chart.name}.vl.json`), `${JSON.stringify(chart.spec, null, 1)}\n`);
+  await writeFile(join(folder, `${chart.name}.svg`), `${svg}\n`);
+  await writeFile(join(folder, `${chart.name}.png`), toPng(svg));
+}

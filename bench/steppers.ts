@@ -5,9 +5,9 @@ import {
   emitJavaScript,
   findStepper,
   interpret,
-  makeScratch,
   type ProgramStepper,
   pointMass,
+  supply,
 } from "@perigauge/steppers";
 import { Bench } from "tinybench";
 
@@ -54,8 +54,8 @@ export async function steppersBench(milliseconds = 1000): Promise<readonly Stepp
 
 function asLoop(executable: Executable): Loop {
   const times = new Float64Array(0);
-  const scratch = makeScratch(2);
-  return (count, h, state, rows) => executable.advance(count, h, state, rows, times, () => {}, scratch);
+  const force = supply(2);
+  return (count, h, state, rows) => executable.advance(count, h, state, rows, times, force);
 }
 
 function run(loop: Loop, count = steps): () => void {

@@ -1,13 +1,23 @@
 import {
+  fromAdams,
   fromComposition,
+  fromExtrapolation,
+  fromGaussJackson,
+  fromHermite,
+  fromLogarithmicLeapfrog,
   fromNystrom,
   fromNystromPair,
   fromPair,
   fromSplitting,
+  fromSundman,
   fromTableau,
 } from "./build/stepper-of.ts";
+import { hermite4 } from "./methods/hermite/hermite-4.ts";
 import { hasEmbedded } from "./methods/method.ts";
-import { compositions, nystromTableaus, splittings, tableaus } from "./registry.ts";
+import { adamsBashforthMoulton } from "./methods/multistep/adams-bashforth-moulton.ts";
+import { gaussJackson8 } from "./methods/multistep/gauss-jackson-8.ts";
+import { logarithmicLeapfrog } from "./methods/time-transformed/logarithmic-leapfrog.ts";
+import { compositions, extrapolations, nystromTableaus, splittings, sundmans, tableaus } from "./registry.ts";
 import type { Stepper } from "./stepper.ts";
 
 /** Every built-in stepper, family by family. */
@@ -18,6 +28,12 @@ export const catalogue: readonly Stepper[] = [
   ...nystromTableaus.filter(hasEmbedded).map(fromNystromPair),
   ...splittings.map(fromSplitting),
   ...compositions.flatMap(fromComposition),
+  ...adamsBashforthMoulton.map(fromAdams),
+  fromGaussJackson(gaussJackson8),
+  ...extrapolations.flatMap(fromExtrapolation),
+  fromHermite(hermite4),
+  fromLogarithmicLeapfrog(logarithmicLeapfrog),
+  ...sundmans.map(fromSundman),
 ];
 
 /** Other usual names of steppers in the catalogue. */

@@ -15,6 +15,8 @@ export const invalid = {
   tolerance: (got: unknown): InvalidInputError => rule("start.tolerance", "must be in (0, 1)", got),
   endTime: (got: unknown): InvalidInputError => rule("start.endTime", "must be finite and positive", got),
   maxStep: (got: unknown): InvalidInputError => rule("start.maxStep", "must be positive", got),
+  jerk: (id: string): InvalidInputError =>
+    rule("start.jerk", `must be given with an acceleration for ${id}`, "none"),
   summation: (got: string): InvalidInputError =>
     rule("start.summation", "must be plain for this stepper", got),
   maxSteps: (got: number): InvalidInputError =>

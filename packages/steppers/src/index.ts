@@ -7,8 +7,8 @@ export { InvalidInputError } from "./errors.ts";
 export { ownStepper } from "./own-stepper.ts";
 export { countEvaluations, countFlops } from "./program/count.ts";
 export { emitJavaScript } from "./program/emit-javascript.ts";
-export type { Advance, Evaluate, Executable, Scratch } from "./program/executable.ts";
-export { makeScratch } from "./program/executable.ts";
+export type { Advance, Evaluate, Executable, SuppliedForce } from "./program/executable.ts";
+export { supply } from "./program/executable.ts";
 export { pointMass, suppliedForce } from "./program/force.ts";
 export { interpret } from "./program/interpret.ts";
 export { type Lowered, lower } from "./program/lower.ts";
@@ -16,6 +16,7 @@ export type { BinaryKind, Dimension, Operation, Program, StepProgram, Value } fr
 export type { ProgramStepper } from "./run/fixed-step.ts";
 export type {
   Acceleration,
+  Jerk,
   OwnStepper,
   Start,
   Stepper,

@@ -4,7 +4,19 @@ import { sofroniouSpaletta10 } from "./methods/composition/sofroniou-spaletta-10
 import { suzuki4 } from "./methods/composition/suzuki-4.ts";
 import { suzukiUmeno8 } from "./methods/composition/suzuki-umeno-8.ts";
 import { yoshida6, yoshida8 } from "./methods/composition/yoshida.ts";
-import type { Composition, NystromTableau, Splitting, Tableau } from "./methods/method.ts";
+import { bulirschStoer8, bulirschStoer10, bulirschStoer12 } from "./methods/extrapolation/bulirsch-stoer.ts";
+import {
+  stormerExtrapolation8,
+  stormerExtrapolation12,
+} from "./methods/extrapolation/stormer-extrapolation.ts";
+import type {
+  Composition,
+  Extrapolation,
+  NystromTableau,
+  Splitting,
+  Sundman,
+  Tableau,
+} from "./methods/method.ts";
 import { bettisNystrom5 } from "./methods/nystrom/bettis-nystrom-5.ts";
 import { dormandNystrom4 } from "./methods/nystrom/dormand-nystrom-4.ts";
 import { dormandNystrom6 } from "./methods/nystrom/dormand-nystrom-6.ts";
@@ -45,6 +57,11 @@ import { omelyan4 } from "./methods/splitting/omelyan-4.ts";
 import { ruth3 } from "./methods/splitting/ruth-3.ts";
 import { leapfrog, velocityVerlet } from "./methods/splitting/second-order.ts";
 import { symplecticEuler, symplecticEulerDk } from "./methods/splitting/symplectic-euler.ts";
+import {
+  sundmanDormandPrince5,
+  sundmanDormandPrince8,
+  sundmanRk4,
+} from "./methods/time-transformed/sundman.ts";
 
 // Every method that is data. A new one is a file and a line here: catalogue and proofs take it from these lists.
 
@@ -113,3 +130,15 @@ export const compositions: readonly Composition[] = [
   suzukiUmeno8,
   sofroniouSpaletta10,
 ];
+
+/** Extrapolation with a fixed number of columns: a fixed-step and a variable-step stepper each. */
+export const extrapolations: readonly Extrapolation[] = [
+  bulirschStoer8,
+  bulirschStoer10,
+  bulirschStoer12,
+  stormerExtrapolation8,
+  stormerExtrapolation12,
+];
+
+/** Runge-Kutta methods with steps proportional to the distance. */
+export const sundmans: readonly Sundman[] = [sundmanRk4, sundmanDormandPrince5, sundmanDormandPrince8];

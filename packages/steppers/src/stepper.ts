@@ -6,6 +6,9 @@
 /** The acceleration at position `q`, written to `out`; both of length 2 or 3. */
 export type Acceleration = (q: Float64Array, out: Float64Array) => void;
 
+/** The time derivative of the acceleration at position `q` and velocity `v`, written to `out`; all of length 2 or 3. */
+export type Jerk = (q: Float64Array, v: Float64Array, out: Float64Array) => void;
+
 export type Summation = "plain" | "compensated";
 
 /** What can be said of a stepper without running it. */
@@ -59,6 +62,8 @@ export interface Start {
   readonly summation?: Summation;
   /** Default: the point mass, a = -q / r^3. */
   readonly acceleration?: Acceleration;
+  /** The jerk that belongs to `acceleration`; only steppers that use it (`hermite-4`) ask for it. */
+  readonly jerk?: Jerk;
 }
 
 /** A run in progress. */

@@ -6,12 +6,13 @@ import {
   type Executable,
   emitJavaScript,
   interpret,
-  makeScratch,
+  type Jerk,
   type ProgramStepper,
   pointMass,
   type Setting,
   type StepProgram,
   suppliedForce,
+  supply,
 } from "../src/index.ts";
 import { periapsis } from "./support/runs.ts";
 
@@ -30,17 +31,30 @@ const supplied: Acceleration = (q, out) => {
   for (let k = 0; k < q.length; k += 1) out[k] = q[k]! * w;
 };
 
+/** Its jerk, likewise. */
+const suppliedJerk: Jerk = (q, v, out) => {
+  let r2 = q[0]! * q[0]! + q[1]! * q[1]!;
+  let qv = q[0]! * v[0]! + q[1]! * v[1]!;
+  if (q.length === 3) {
+    r2 += q[2]! * q[2]!;
+    qv += q[2]! * v[2]!;
+  }
+  const w = -1 / (r2 * Math.sqrt(r2));
+  const stretch = 3 * (qv / r2);
+  for (let k = 0; k < q.length; k += 1) out[k] = w * (v[k]! - stretch * q[k]!);
+};
+
 function run(
   program: StepProgram,
   make: (p: StepProgram["step"]) => Executable,
   dimension: 2 | 3,
 ): Float64Array {
   const variables = new Float64Array(program.step.inputs);
-  const scratch = makeScratch(dimension);
+  const force = supply(dimension, supplied, suppliedJerk);
   const rows = new Float64Array(2 * dimension * steps);
   const times = new Float64Array(2 * steps);
-  make(program.start).evaluate(h, periapsis(0.4, dimension), variables, supplied, scratch);
-  make(program.step).advance(steps, h, variables, rows, times, supplied, scratch);
+  make(program.start).evaluate(h, periapsis(0.4, dimension), variables, force);
+  make(program.step).advance(steps, h, variables, rows, times, force);
   return Float64Array.of(...rows, ...times, ...variables);
 }
 
@@ -71,7 +85,7 @@ describe("what is counted is what is made", () => {
       calls += 1;
       supplied(q, out);
     };
-    const trajectory = stepper.begin({ state: periapsis(0.4), step: h, acceleration });
+    const trajectory = stepper.begin({ state: periapsis(0.4), step: h, acceleration, jerk: suppliedJerk });
     expect(trajectory.evaluations).toBe(calls);
     trajectory.advance(steps, new Float64Array(4 * steps), new Float64Array(2 * steps));
     expect(trajectory.evaluations).toBe(calls);

@@ -1,14 +1,5 @@
 import { describe, expect, it } from "vitest";
-import {
-  advanceTo,
-  distance,
-  energy,
-  exactState,
-  periapsis,
-  runToEnd,
-  stateAfter,
-  stepper,
-} from "./support/runs.ts";
+import { advanceTo, distance, energy, exactState, periapsis, runToEnd, stepper } from "./support/runs.ts";
 
 describe("variable step", () => {
   it("lands on the end time exactly and keeps near its tolerance", () => {

@@ -87,6 +87,24 @@ export function buildNystrom(method: NystromTableau, setting: Setting): StepProg
   });
 }
 
+/** One step from (q, v), whose acceleration is known, to (q, v); for starting other methods. */
+export function writeNystromStep(
+  b: ProgramBuilder,
+  method: NystromTableau,
+  q: readonly Value[],
+  v: readonly Value[],
+  first: readonly Value[],
+): { readonly position: Value[]; readonly velocity: Value[] } {
+  const rows = nystromRows(method);
+  const accelerations = writeStages(b, rows, q, v, first);
+  return {
+    position: q.map((x, k) => b.add(x, shift(b, one, v[k]!, rows.position, component(accelerations, k))!)),
+    velocity: v.map((x, k) =>
+      b.add(x, b.mul(b.step, b.weightedSum(rows.velocity, component(accelerations, k))!)),
+    ),
+  };
+}
+
 /** The trial step of an embedded Nystrom pair. */
 export function buildNystromPair(method: EmbeddedNystrom, setting: Setting): PairProgram {
   const rows = nystromRows(method);

@@ -4,20 +4,30 @@ import type {
   Composition,
   EmbeddedNystrom,
   EmbeddedTableau,
+  Extrapolation,
+  Multistep,
   NystromTableau,
   Published,
   Splitting,
+  Sundman,
   Tableau,
 } from "../methods/method.ts";
 import { type Dense, nystromInterpolant, rungeKuttaInterpolant } from "../run/dense.ts";
 import { fixedStep, type ProgramStepper } from "../run/fixed-step.ts";
 import { type PairStepper, variableStep } from "../run/variable-step.ts";
+import { buildAdams } from "./adams.ts";
 import { compose } from "./composition.ts";
 import { denseRows } from "./dense-rows.ts";
 import { buildDenseStages } from "./dense-stages.ts";
+import { buildExtrapolation, buildExtrapolationPair } from "./extrapolation.ts";
+import { buildGaussJackson } from "./gauss-jackson.ts";
+import { buildHermite } from "./hermite.ts";
+import { buildLogarithmicLeapfrog } from "./logarithmic-leapfrog.ts";
 import { buildNystrom, buildNystromPair } from "./nystrom.ts";
 import { buildRungeKutta, buildRungeKuttaPair, liveStages } from "./runge-kutta.ts";
 import { buildSplitting, operationsOf, type SplittingOperation } from "./splitting.ts";
+import type { BuildStep } from "./step-program.ts";
+import { buildSundman } from "./sundman.ts";
 
 const published = ({ id, title, order, source, note }: Published): Published => ({
   id,
@@ -138,5 +148,57 @@ function splittingStepper(
       stages: () => operations().filter(({ kind }) => kind === "kick").length,
     },
     (setting) => buildSplitting(operations(), setting),
+  );
+}
+
+/** The Adams predictor-corrector. */
+export function fromAdams(method: Multistep): ProgramStepper {
+  return multistepStepper(method, (setting) => buildAdams(method, setting));
+}
+
+/** The second-sum method of Gauss and Jackson. */
+export function fromGaussJackson(method: Multistep): ProgramStepper {
+  return multistepStepper(method, (setting) => buildGaussJackson(method, setting));
+}
+
+function multistepStepper(method: Multistep, build: BuildStep): ProgramStepper {
+  const claims = { ...published(method), ...notGeometric, family: "multistep" } as const;
+  return fixedStep({ ...claims, stages: () => method.backValues, selfStarting: false }, build);
+}
+
+/** Extrapolation with a fixed number of columns: of fixed step, and of variable step with the last two columns compared. */
+export function fromExtrapolation(method: Extrapolation): readonly [ProgramStepper, PairStepper] {
+  const claims = { ...published(method), ...notGeometric, family: "extrapolation" } as const;
+  const stages = (): number => parseRow(method.sequence).length;
+  return [
+    fixedStep({ ...claims, stages }, (setting) => buildExtrapolation(method, setting)),
+    variableStep(
+      { ...claims, ...method.variable, embeddedOrder: method.order - 2, stages },
+      (setting) => buildExtrapolationPair(method, setting),
+      null,
+    ),
+  ];
+}
+
+export function fromHermite(method: Published): ProgramStepper {
+  const claims = { ...published(method), ...notGeometric, family: "hermite", needsJerk: true } as const;
+  return fixedStep({ ...claims, stages: () => 1 }, buildHermite);
+}
+
+export function fromLogarithmicLeapfrog(method: Published): ProgramStepper {
+  const claims = { ...published(method), family: "time-transformed", explicit: true, uneven: true } as const;
+  return fixedStep(
+    { ...claims, symplectic: true, timeReversible: true, stages: () => 1 },
+    buildLogarithmicLeapfrog,
+  );
+}
+
+/** A Runge-Kutta method with steps proportional to the distance. */
+export function fromSundman(method: Sundman): ProgramStepper {
+  const { a, b } = method.tableau;
+  const claims = { ...published(method), ...notGeometric, family: "time-transformed", uneven: true } as const;
+  return fixedStep(
+    { ...claims, stages: () => liveStages(a.map(parseRow), parseRow(b)).filter(Boolean).length },
+    (setting) => buildSundman(method.tableau, setting),
   );
 }

@@ -109,3 +109,21 @@ export function hasEmbedded<Method extends { readonly embedded?: object }>(
 ): method is Method & Required<Pick<Method, "embedded">> {
   return method.embedded !== undefined;
 }
+
+/** Extrapolation of a basic rule in 1/n^2 over numbers n of sub-steps: order twice the number of columns. */
+export interface Extrapolation extends Published {
+  readonly basic: "modified-midpoint" | "stormer";
+  readonly sequence: Coefficients;
+  readonly variable: { readonly id: string; readonly title: string };
+}
+
+/** An explicit Runge-Kutta method in the fictitious time ds = dt / r. */
+export interface Sundman extends Published {
+  readonly tableau: Tableau;
+}
+
+/** A predictor-corrector on equal steps; its weights are generated, not typed. */
+export interface Multistep extends Published {
+  /** Accelerations (and velocities) of this many past points, the present one included, enter a step. */
+  readonly backValues: number;
+}

@@ -1,8 +1,20 @@
 import { equal, isZero, one, type Rational, rational, toDoubleDouble } from "../exact/rational.ts";
-import type { BinaryKind, Dimension, Operation, Program, Value } from "./program.ts";
+import {
+  type BinaryKind,
+  type Dimension,
+  isCall,
+  type Operation,
+  type Program,
+  type Value,
+} from "./program.ts";
 
-/** Writes a force evaluation into a program: from a position (one value per dimension) to an acceleration. */
-export type Force = (builder: ProgramBuilder, position: readonly Value[]) => Value[];
+/** Writes a force evaluation into a program. */
+export interface Force {
+  /** From a position (one value per dimension) to an acceleration. */
+  acceleration(builder: ProgramBuilder, position: readonly Value[]): Value[];
+  /** From position and velocity to the acceleration's time derivative. */
+  jerk(builder: ProgramBuilder, position: readonly Value[], velocity: readonly Value[]): Value[];
+}
 
 const minusOne = rational(-1n);
 
@@ -15,14 +27,19 @@ export class ProgramBuilder {
   readonly #known = new Map<string, Value>();
   readonly #stageEnds: Value[] = [];
 
-  constructor(dimension: Dimension, inputs: number, force: Force) {
+  readonly #backward: boolean;
+
+  /** `backward`: the step that the program writes is minus the one it is run with. */
+  constructor(dimension: Dimension, inputs: number, force: Force, backward = false) {
+    this.#backward = backward;
     this.dimension = dimension;
     this.#inputs = inputs;
     this.#force = force;
   }
 
   get step(): Value {
-    return this.#append({ kind: "step", args: [] }, "step");
+    const step = this.#append({ kind: "step", args: [] }, "step");
+    return this.#backward ? this.mul(this.constant(minusOne), step) : step;
   }
 
   variable(index: number): Value {
@@ -88,15 +105,26 @@ export class ProgramBuilder {
 
   /** One force evaluation; ends a stage. */
   acceleration(position: readonly Value[]): Value[] {
-    const result = this.#force(this, position);
+    const result = this.#force.acceleration(this, position);
     this.#stageEnds.push(this.#operations.length - 1);
     return result;
   }
 
+  /** One force evaluation that gives the jerk as well; ends a stage. */
+  accelerationAndJerk(
+    position: readonly Value[],
+    velocity: readonly Value[],
+  ): { readonly acceleration: Value[]; readonly jerk: Value[] } {
+    const acceleration = this.#force.acceleration(this, position);
+    const jerk = this.#force.jerk(this, position, velocity);
+    this.#stageEnds.push(this.#operations.length - 1);
+    return { acceleration, jerk };
+  }
+
   /** A call of a force that the caller of the program supplies. Every call is made, even twice at one position. */
-  call(position: readonly Value[]): Value[] {
-    const call = this.#operations.push({ kind: "acceleration", args: position }) - 1;
-    return position.map((_, index) =>
+  call(kind: "acceleration" | "jerk", args: readonly Value[]): Value[] {
+    const call = this.#operations.push({ kind, args }) - 1;
+    return Array.from({ length: this.dimension }).map((_, index) =>
       this.#append({ kind: "component", index, args: [call] }, `component ${call} ${index}`),
     );
   }
@@ -105,7 +133,7 @@ export class ProgramBuilder {
     const used = new Set<Value>(outputs);
     for (let id = this.#operations.length - 1; id >= 0; id -= 1) {
       const operation = this.#operations[id]!;
-      if (operation.kind === "acceleration") used.add(id);
+      if (isCall(operation)) used.add(id);
       if (used.has(id)) for (const arg of operation.args) used.add(arg);
     }
     const renumbered = new Map<Value, Value>();

@@ -1,6 +1,6 @@
 import type { Advance, Evaluate, Executable } from "./executable.ts";
 import { lower } from "./lower.ts";
-import type { Operation, Program, Value } from "./program.ts";
+import { isCall, type Operation, type Program, type Value } from "./program.ts";
 
 const infix = { add: "+", sub: "-", mul: "*", div: "/" } as const;
 
@@ -15,8 +15,8 @@ export function emitJavaScript(program: Program): Executable {
   };
 }
 
-const advanceParameters = ["steps", "h", "variables", "rows", "times", "acceleration", "scratch"];
-const evaluateParameters = ["h", "inputs", "outputs", "acceleration", "scratch"];
+const advanceParameters = ["steps", "h", "variables", "rows", "times", "force"];
+const evaluateParameters = ["h", "inputs", "outputs", "force"];
 
 /** The body of the loop form. */
 export function advanceSource(program: Program): string {
@@ -50,10 +50,10 @@ function evaluateSource(program: Program): string {
 }
 
 function head(program: Program): string[] {
-  const calls = program.operations.some((operation) => operation.kind === "acceleration");
+  const calls = program.operations.some(isCall);
   return [
     '"use strict";',
-    ...(calls ? ["const position = scratch.position, result = scratch.result;"] : []),
+    ...(calls ? ["const { acceleration, jerk, position, velocity, result } = force;"] : []),
     ...lower(program).prologue.map((id) => line(program, id, () => "")),
   ];
 }
@@ -78,8 +78,14 @@ function line(program: Program, id: Value, variable: (index: number) => string):
   const operation = program.operations[id]!;
   if (operation.kind === "variable") return "";
   const args = operation.args.map((arg) => name(program, arg, variable));
-  if (operation.kind === "acceleration") {
-    return `${args.map((arg, k) => `position[${k}] = ${arg};`).join(" ")} acceleration(position, result);`;
+  if (isCall(operation)) {
+    const d = program.dimension;
+    const put = args
+      .map((arg, k) => (k < d ? `position[${k}] = ${arg};` : `velocity[${k - d}] = ${arg};`))
+      .join(" ");
+    return operation.kind === "jerk"
+      ? `${put} jerk(position, velocity, result);`
+      : `${put} acceleration(position, result);`;
   }
   return `const t${id} = ${expression(operation, args)};`;
 }

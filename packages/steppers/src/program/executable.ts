@@ -1,4 +1,4 @@
-import type { Acceleration } from "../stepper.ts";
+import type { Acceleration, Jerk } from "../stepper.ts";
 
 /**
  * Runs a step program `steps` times. `variables` holds the loop variables and is left at the last step's; after each step the state
@@ -10,8 +10,7 @@ export type Advance = (
   variables: Float64Array,
   rows: Float64Array,
   times: Float64Array,
-  acceleration: Acceleration,
-  scratch: Scratch,
+  force: SuppliedForce,
 ) => void;
 
 /** Runs a program once, from `inputs` to `outputs`. */
@@ -19,21 +18,39 @@ export type Evaluate = (
   step: number,
   inputs: Float64Array,
   outputs: Float64Array,
-  acceleration: Acceleration,
-  scratch: Scratch,
+  force: SuppliedForce,
 ) => void;
-
-/** Where a supplied force reads its position and writes its result: one pair per run, so that runs do not share state. */
-export interface Scratch {
-  readonly position: Float64Array;
-  readonly result: Float64Array;
-}
-
-export function makeScratch(dimension: number): Scratch {
-  return { position: new Float64Array(dimension), result: new Float64Array(dimension) };
-}
 
 export interface Executable {
   readonly advance: Advance;
   readonly evaluate: Evaluate;
+}
+
+/**
+ * What a program calls for accelerations that are not written into it, and where it puts the arguments and finds the result: arrays of one
+ * run, so that runs do not share state.
+ */
+export interface SuppliedForce {
+  readonly acceleration: Acceleration;
+  readonly jerk: Jerk;
+  readonly position: Float64Array;
+  readonly velocity: Float64Array;
+  readonly result: Float64Array;
+}
+
+const nothing = (): void => {};
+
+/** The supplied side of a run; programs with the force written into them never call it. */
+export function supply(
+  dimension: number,
+  acceleration: Acceleration = nothing,
+  jerk: Jerk = nothing,
+): SuppliedForce {
+  return {
+    acceleration,
+    jerk,
+    position: new Float64Array(dimension),
+    velocity: new Float64Array(dimension),
+    result: new Float64Array(dimension),
+  };
 }

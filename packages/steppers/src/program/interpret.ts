@@ -1,5 +1,4 @@
-import type { Acceleration } from "../stepper.ts";
-import type { Executable, Scratch } from "./executable.ts";
+import type { Executable, SuppliedForce } from "./executable.ts";
 import type { Program } from "./program.ts";
 
 /** Runs a program one operation at a time: slow and obvious, the oracle for every emitter and the fallback where none may run. */
@@ -7,15 +6,15 @@ export function interpret(program: Program): Executable {
   const values = new Float64Array(program.operations.length);
   const width = 2 * program.dimension;
   return {
-    evaluate(step, inputs, outputs, acceleration, scratch): void {
-      runOnce(program, values, step, inputs, acceleration, scratch);
+    evaluate(step, inputs, outputs, force): void {
+      runOnce(program, values, step, inputs, force);
       program.outputs.forEach((id, k) => {
         outputs[k] = values[id]!;
       });
     },
-    advance(steps, step, variables, rows, times, acceleration, scratch): void {
+    advance(steps, step, variables, rows, times, force): void {
       for (let n = 0; n < steps; n += 1) {
-        runOnce(program, values, step, variables, acceleration, scratch);
+        runOnce(program, values, step, variables, force);
         program.outputs.forEach((id, k) => {
           variables[k] = values[id]!;
         });
@@ -34,10 +33,11 @@ function runOnce(
   values: Float64Array,
   step: number,
   inputs: Float64Array,
-  acceleration: Acceleration,
-  scratch: Scratch,
+  force: SuppliedForce,
 ): void {
-  // Results of calls, by the operation that called: a later call overwrites the scratch.
+  const { position, velocity, result } = force;
+  const d = program.dimension;
+  // Results of calls, by the operation that called: a later call overwrites them.
   const results = new Map<number, Float64Array>();
   program.operations.forEach((operation, id) => {
     const { args } = operation;
@@ -80,11 +80,14 @@ function runOnce(
         values[id] = Math.abs(a);
         break;
       case "acceleration":
+      case "jerk":
         args.forEach((arg, k) => {
-          scratch.position[k] = values[arg]!;
+          if (k < d) position[k] = values[arg]!;
+          else velocity[k - d] = values[arg]!;
         });
-        acceleration(scratch.position, scratch.result);
-        results.set(id, scratch.result.slice());
+        if (operation.kind === "acceleration") force.acceleration(position, result);
+        else force.jerk(position, velocity, result);
+        results.set(id, result.slice());
         break;
       case "component":
         values[id] = results.get(args[0]!)![operation.index]!;

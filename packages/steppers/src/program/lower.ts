@@ -1,4 +1,4 @@
-import type { Program, Value } from "./program.ts";
+import { isCall, type Program, type Value } from "./program.ts";
 
 /** A program arranged for an emitter; each list holds values in an order in which they can be computed. */
 export interface Lowered {
@@ -22,7 +22,7 @@ export function lower(program: Program): Lowered {
     if (operation.kind === "constant") constants.push(id);
     const invariant = operation.args.every((arg) => fixed.has(arg));
     if (operation.kind === "constant" || operation.kind === "step") fixed.add(id);
-    else if (operation.kind !== "variable" && operation.kind !== "acceleration" && invariant) {
+    else if (operation.kind !== "variable" && !isCall(operation) && invariant) {
       fixed.add(id);
       prologue.push(id);
     } else {

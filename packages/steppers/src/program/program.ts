@@ -3,7 +3,7 @@ export type Value = number;
 
 /**
  * One operation on doubles. `variable` reads loop variable `index` as it stands at the start of the step; `acceleration` calls a force
- * that the caller supplies and `component` takes one of its results; `less-equal` gives 1 or 0 and `select` takes its second argument
+ * that the caller supplies (`jerk` its derivative, from position and velocity) and `component` takes one of its results; `less-equal` gives 1 or 0 and `select` takes its second argument
  * where the first is not 0, else its third.
  */
 export type Operation =
@@ -19,7 +19,7 @@ export type Operation =
   | { readonly kind: BinaryKind; readonly args: readonly [Value, Value] }
   | { readonly kind: "sqrt" | "abs"; readonly args: readonly [Value] }
   | { readonly kind: "select"; readonly args: readonly [Value, Value, Value] }
-  | { readonly kind: "acceleration"; readonly args: readonly Value[] }
+  | { readonly kind: "acceleration" | "jerk"; readonly args: readonly Value[] }
   | { readonly kind: "component"; readonly index: number; readonly args: readonly [Value] };
 
 export type BinaryKind = "add" | "sub" | "mul" | "div" | "max" | "less-equal";
@@ -46,4 +46,9 @@ export interface StepProgram {
   /** Inputs: the state. Outputs: the state and the carried variables. */
   readonly start: Program;
   readonly step: Program;
+}
+
+/** True for the operations that call a force which the caller supplies. */
+export function isCall(operation: Operation): boolean {
+  return operation.kind === "acceleration" || operation.kind === "jerk";
 }

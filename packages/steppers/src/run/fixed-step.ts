@@ -1,10 +1,12 @@
 import type { BuildStep, Setting } from "../build/step-program.ts";
+import { invalid } from "../errors.ts";
 import { compile } from "../program/compile.ts";
 import { countEvaluations } from "../program/count.ts";
-import { type Executable, makeScratch } from "../program/executable.ts";
+import { type Executable, type SuppliedForce, supply } from "../program/executable.ts";
 import { pointMass, suppliedForce } from "../program/force.ts";
+import { interpret } from "../program/interpret.ts";
 import type { StepProgram } from "../program/program.ts";
-import type { Start, Stepper, StepperInfo, Summation, Trajectory } from "../stepper.ts";
+import type { Start, Stepper, StepperInfo, Trajectory } from "../stepper.ts";
 import { checkAdvance, dimensionOf, stepOf } from "./begin.ts";
 
 /** What a method claims of itself. The rest of `StepperInfo` is counted from its program when first asked for. */
@@ -14,6 +16,9 @@ export type Claims = Pick<
 > & {
   readonly stages: () => number;
   readonly uneven?: boolean;
+  /** False where a restart costs evaluations of its own to rebuild the past. */
+  readonly selfStarting?: boolean;
+  readonly needsJerk?: boolean;
 };
 
 /** A stepper of fixed h whose step is a straight-line program. Programs are built and compiled when first needed, once each. */
@@ -22,22 +27,23 @@ export interface ProgramStepper extends Stepper {
   program(setting: Setting): StepProgram;
 }
 
-const noForce = (): void => {};
 const noTimes = new Float64Array(0);
 
-export function fixedStep(claims: Claims, build: BuildStep): ProgramStepper {
-  const { stages, uneven = false, ...info } = claims;
-  const compiled = new Map<string, { step: Executable; start: Executable; program: StepProgram }>();
+interface Compiled {
+  readonly step: Executable;
+  readonly start: Executable;
+  readonly startEvaluations: number;
+  readonly stepEvaluations: number;
+  readonly variables: number;
+}
 
-  const get = (dimension: 2 | 3, summation: Summation, supplied: boolean) => {
-    const key = `${dimension} ${summation} ${supplied}`;
-    let found = compiled.get(key);
-    if (found === undefined) {
-      const program = build({ dimension, summation, force: supplied ? suppliedForce : pointMass });
-      found = { program, step: compile(program.step), start: compile(program.start) };
-      compiled.set(key, found);
-    }
-    return found;
+export function fixedStep(claims: Claims, build: BuildStep): ProgramStepper {
+  const { stages, uneven = false, selfStarting = true, needsJerk = false, ...info } = claims;
+  const compiled = new Map<string, Compiled>();
+  let counted: readonly [start: number, step: number] | undefined;
+  const counts = (): readonly [start: number, step: number] => {
+    counted ??= countBoth(build({ dimension: 2, summation: "plain", force: pointMass }));
+    return counted;
   };
 
   return {
@@ -45,41 +51,74 @@ export function fixedStep(claims: Claims, build: BuildStep): ProgramStepper {
     knob: "step",
     uneven,
     denseOutput: false,
-    selfStarting: true,
+    selfStarting,
     get stages() {
       return stages();
     },
     get evaluationsPerStep() {
-      return countEvaluations(get(2, "plain", false).program.step);
+      return counts()[1];
     },
     get startEvaluations() {
-      return countEvaluations(get(2, "plain", false).program.start);
+      return counts()[0];
     },
     program: build,
     begin(start: Start): Trajectory {
       const dimension = dimensionOf(start);
       const h = stepOf(start);
-      const { acceleration, summation = "plain", state } = start;
-      const { step, start: first, program } = get(dimension, summation, acceleration !== undefined);
-      const force = acceleration ?? noForce;
-      const scratch = makeScratch(dimension);
-      const variables = new Float64Array(program.step.inputs);
-      first.evaluate(h, state, variables, force, scratch);
-      const perStep = countEvaluations(program.step);
-      let evaluations = countEvaluations(program.start);
-      return {
-        advance(maxSteps, rows, times = noTimes): number {
-          checkAdvance(maxSteps, 2 * dimension, rows, uneven, times);
-          step.advance(maxSteps, h, variables, rows, times, force, scratch);
-          evaluations += maxSteps * perStep;
-          return maxSteps;
-        },
-        get evaluations() {
-          return evaluations;
-        },
-        rejectedSteps: 0,
-        smallestStep: Math.abs(h),
-      };
+      const { acceleration, jerk, summation = "plain" } = start;
+      if (needsJerk && acceleration !== undefined && jerk === undefined) throw invalid.jerk(info.id);
+      const key = `${dimension} ${summation} ${acceleration !== undefined}`;
+      let code = compiled.get(key);
+      if (code === undefined) {
+        code = compileStep(
+          build({ dimension, summation, force: acceleration === undefined ? pointMass : suppliedForce }),
+        );
+        compiled.set(key, code);
+      }
+      return begin(code, start.state, h, supply(dimension, acceleration, jerk), uneven);
     },
+  };
+}
+
+const countBoth = ({ start, step }: StepProgram): readonly [start: number, step: number] => [
+  countEvaluations(start),
+  countEvaluations(step),
+];
+
+function compileStep(program: StepProgram): Compiled {
+  const [startEvaluations, stepEvaluations] = countBoth(program);
+  // A start is run once a trajectory and can be long: interpreting it costs less than compiling it.
+  return {
+    step: compile(program.step),
+    start: interpret(program.start),
+    startEvaluations,
+    stepEvaluations,
+    variables: program.step.inputs,
+  };
+}
+
+function begin(
+  code: Compiled,
+  state: Float64Array,
+  h: number,
+  force: SuppliedForce,
+  uneven: boolean,
+): Trajectory {
+  const { step } = code;
+  const variables = new Float64Array(code.variables);
+  code.start.evaluate(h, state, variables, force);
+  let evaluations = code.startEvaluations;
+  return {
+    advance(maxSteps, rows, times = noTimes): number {
+      checkAdvance(maxSteps, state.length, rows, uneven, times);
+      step.advance(maxSteps, h, variables, rows, times, force);
+      evaluations += maxSteps * code.stepEvaluations;
+      return maxSteps;
+    },
+    get evaluations() {
+      return evaluations;
+    },
+    rejectedSteps: 0,
+    smallestStep: Math.abs(h),
   };
 }

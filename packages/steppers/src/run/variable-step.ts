@@ -3,10 +3,10 @@ import type { Setting } from "../build/step-program.ts";
 import { invalid } from "../errors.ts";
 import { compile } from "../program/compile.ts";
 import { countEvaluations } from "../program/count.ts";
-import { type Executable, makeScratch, type Scratch } from "../program/executable.ts";
+import { type Executable, type SuppliedForce, supply } from "../program/executable.ts";
 import { pointMass, suppliedForce } from "../program/force.ts";
 import type { Program } from "../program/program.ts";
-import type { Acceleration, Start, Stepper, Trajectory } from "../stepper.ts";
+import type { Start, Stepper, Trajectory } from "../stepper.ts";
 import { checkAdvance, dimensionOf } from "./begin.ts";
 import { type Controller, makeController, power64 } from "./controller.ts";
 import type { Dense } from "./dense.ts";
@@ -86,8 +86,6 @@ function compilePair(
   };
 }
 
-const noForce = (): void => {};
-
 class VariableStepRun implements Trajectory {
   evaluations = 0;
   rejectedSteps = 0;
@@ -95,8 +93,7 @@ class VariableStepRun implements Trajectory {
   readonly interpolate?: (timeHi: number, timeLo: number, out: Float64Array) => void;
   readonly #pair: Compiled;
   readonly #width: number;
-  readonly #force: Acceleration;
-  readonly #scratch: Scratch;
+  readonly #force: SuppliedForce;
   readonly #controller: Controller;
   readonly #tolerance: number;
   readonly #end: Time;
@@ -127,8 +124,7 @@ class VariableStepRun implements Trajectory {
     this.#longest = maxStep;
     this.#pair = pair;
     this.#width = 2 * d;
-    this.#force = start.acceleration ?? noForce;
-    this.#scratch = makeScratch(d);
+    this.#force = supply(d, start.acceleration);
     this.#controller = makeController(lowerOrder);
     this.#tolerance = tolerance;
     this.#end = { hi: endTime[0], lo: endTime[1] };
@@ -164,7 +160,7 @@ class VariableStepRun implements Trajectory {
       // A step that nearly reaches the end is stretched to it, so that no sliver of a step remains.
       const last = this.#step * 1.0001 >= remaining;
       const h = last ? remaining : this.#step;
-      this.#pair.trial.evaluate(h, this.#inputs, this.#outputs, this.#force, this.#scratch);
+      this.#pair.trial.evaluate(h, this.#inputs, this.#outputs, this.#force);
       this.evaluations += countEvaluations(this.#pair.program.trial);
       const finite = allFinite(this.#outputs, this.#width);
       const ratio = this.#outputs[this.#width]! / this.#tolerance;
@@ -199,7 +195,7 @@ class VariableStepRun implements Trajectory {
 
   #evaluateFirst(): void {
     const acceleration = this.#inputs.subarray(this.#width);
-    this.#pair.first.evaluate(0, this.#inputs, acceleration, this.#force, this.#scratch);
+    this.#pair.first.evaluate(0, this.#inputs, acceleration, this.#force);
     this.evaluations += countEvaluations(this.#pair.program.first);
   }
 
@@ -220,7 +216,7 @@ class VariableStepRun implements Trajectory {
     if (denseStages === null) return own;
     const inputs = Float64Array.of(...this.#before, ...this.#inputs.subarray(d), ...own);
     const added = new Float64Array(denseStages.program.outputs.length);
-    denseStages.run.evaluate(this.#lastStep, inputs, added, this.#force, this.#scratch);
+    denseStages.run.evaluate(this.#lastStep, inputs, added, this.#force);
     this.evaluations += countEvaluations(denseStages.program);
     const half = own.length / 2;
     const addedHalf = added.length / 2;

@@ -21,7 +21,7 @@ export function exactPairs(eccentricity: string, eccentricAnomaly: Decimal): Pai
 }
 
 /** The double itself: `new Decimal(x)` would take its shortest decimal form instead. */
-function exactly(x: number): Decimal {
+export function exactly(x: number): Decimal {
   const { numerator, denominator } = fromDouble(x);
   return new Decimal(numerator.toString()).div(denominator.toString());
 }
@@ -42,10 +42,16 @@ export function anomalyAfter(eccentricity: string, start: Decimal, time: number 
 export interface Arc {
   readonly start: Pairs;
   readonly end: Pairs;
+  /** Eccentric anomaly at the start, rad. */
+  readonly anomaly: Decimal;
 }
 
 /** The arc on which orders are measured: e = 0.3, T = 1, from eccentric anomalies 0, 1, 2.5 and 4.5 rad. */
 export const arcs: readonly Arc[] = [0, 1, 2.5, 4.5].map((anomaly) => {
   const start = new Decimal(anomaly);
-  return { start: exactPairs("0.3", start), end: exactPairs("0.3", anomalyAfter("0.3", start, 1)) };
+  return {
+    anomaly: start,
+    start: exactPairs("0.3", start),
+    end: exactPairs("0.3", anomalyAfter("0.3", start, 1)),
+  };
 });

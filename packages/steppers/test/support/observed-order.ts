@@ -1,5 +1,5 @@
 import type { StepProgram } from "../../src/index.ts";
-import { type Arc, arcs } from "./exact-arc.ts";
+import { type Arc, anomalyAfter, arcs, exactly, exactPairs } from "./exact-arc.ts";
 import { evaluateExactly, type Pairs, pairs } from "./interpret-double-double.ts";
 
 /** State (and what else is carried) after `steps` steps over time 1 of a method's own program, in double-double arithmetic. */
@@ -29,16 +29,29 @@ export function stateError(state: Pairs, exact: Pairs): number {
   return Math.sqrt(sum);
 }
 
-/** Root mean square over the arcs of the state error at their ends. */
-export function arcError(run: (arc: Arc) => Pairs): number {
-  const squares = arcs.map((arc) => stateError(run(arc), arc.end) ** 2);
-  return Math.sqrt(squares.reduce((total, square) => total + square) / arcs.length);
+/**
+ * Error of each arc's run in fictitious time: steps of equal s up to s = 1, compared with the exact state at the time reached, so that an
+ * error of time counts as one of the state.
+ */
+function unevenError(program: StepProgram, { start, anomaly }: Arc, steps: number): number {
+  const end = runExactly(program, start, steps);
+  const [hi, lo] = program.step.time!;
+  const time = exactly(end.hi[hi]!)
+    .plus(exactly(end.lo[hi]!))
+    .plus(exactly(end.hi[lo]!))
+    .plus(exactly(end.lo[lo]!));
+  return stateError(end, exactPairs("0.3", anomalyAfter("0.3", anomaly, time)));
 }
 
-/** Slope of log error between two step counts, the second twice the first. */
+const rms = (values: readonly number[]): number =>
+  Math.sqrt(values.reduce((total, value) => total + value * value, 0) / values.length);
+
+/** Slope of log error (root mean square over the arcs) between two step counts, the second twice the first. */
 export function observedOrder(program: StepProgram, coarse: number): { order: number; error: number } {
-  const [first, second] = [coarse, 2 * coarse].map((steps) =>
-    arcError((arc) => runExactly(program, arc.start, steps)),
-  );
+  const errorOf = (arc: Arc, steps: number): number =>
+    program.step.time === null
+      ? stateError(runExactly(program, arc.start, steps), arc.end)
+      : unevenError(program, arc, steps);
+  const [first, second] = [coarse, 2 * coarse].map((steps) => rms(arcs.map((arc) => errorOf(arc, steps))));
   return { order: Math.log2(first! / second!), error: second! };
 }

@@ -3,7 +3,7 @@ import { join } from "node:path";
 import type { Chart } from "./chart.ts";
 import { describeCharts } from "./describe-charts.ts";
 import type { ChoiceEvidence } from "./evidence.ts";
-import { pageSpec } from "./page/figures.ts";
+import { drawingSpec } from "./page/figures.ts";
 import { renderPage } from "./page/render-page.ts";
 import { toPng } from "./render/to-png.ts";
 import { compileSpec, drawSpec, toSvg } from "./render/to-svg.ts";
@@ -22,7 +22,7 @@ export async function writeReport(
   await mkdir(folder, { recursive: true });
   const drawings = new Map<string, string>();
   for (const chart of charts) {
-    drawings.set(chart.name, await drawSpec(compileSpec(pageSpec(chart.spec)), chart.name));
+    drawings.set(chart.name, await drawSpec(compileSpec(drawingSpec(chart.spec)), chart.name));
     await writeChart(folder, chart);
   }
   await writeFile(join(directory, "report.html"), renderPage(evidence, charts, drawings));

@@ -51,7 +51,7 @@ export function logAxis(values: Iterable<number | null>, airDecades = 0.12): Log
 }
 
 function decadeLabel(exponent: number, plain: boolean): string {
-  if (plain) return String(Number(`1e${exponent}`)).replace(/\B(?=(\d{3})+$)/g, " ");
+  if (plain) return String(Number(`1e${exponent}`)).replace(/\B(?=(\d{3})+$)/g, "\u202f");
   if (exponent === 0) return "1";
   return exponent === 1 ? "10" : `10${superscript(exponent)}`;
 }

@@ -1,29 +1,44 @@
+import type { Quantity } from "../axes/axis-channel.ts";
 import { logAxis } from "../axes/log-axis.ts";
 import type { Chart } from "../chart.ts";
 import type { ChoiceEvidence, CostPoint } from "../evidence.ts";
 import type { Looks } from "../look/stepper-look.ts";
 import { formatCount, formatNumber, formatTimes } from "../text/number.ts";
 import { limitWords, plural } from "../text/words.ts";
+import { levelLayers } from "./level-layers.ts";
 import { makeChart } from "./make-chart.ts";
 import { mutedNote } from "./muted-note.ts";
-import { levelLayers, type Quantity, seriesLayers } from "./series-layers.ts";
+import { seriesLayers, type Tip } from "./series-layers.ts";
+
+const TIPS: readonly Tip[] = [
+  { field: "stepper", title: "stepper" },
+  { field: "knob", title: "step" },
+  { field: "evaluationsPerOrbit", title: "force evaluations per orbit", format: ".4e" },
+  { field: "worstRatio", title: "largest error over its limit", format: ".3e" },
+  { field: "bindingLimit", title: "binding limit" },
+  { field: "evidence", title: "evidence" },
+  { field: "command", title: "command" },
+];
+
+/** What is drawn: costs up to so many times the cheapest that holds, ratios from a thousandth of the limit to ten thousand times it. */
+const MOST_COST = 60;
+const LEAST_RATIO = 1e-3;
+const MOST_RATIO = 1e4;
 
 /** Which stepper buys the limits cheapest? Largest error over its limit against force evaluations per orbit, limit and design line drawn in. */
 export function errorAgainstCost(evidence: ChoiceEvidence, looks: Looks): Chart {
   const points = evidence.costPoints;
   const designFactor = evidence.choice.scenario.designFactor ?? 2;
+  const window = windowOf(points);
   const x: Quantity = {
     field: "evaluationsPerOrbit",
     title: "force evaluations per orbit",
-    axis: logAxis(
-      points.map((point) => point.evaluationsPerOrbit),
-      0.05,
-    ),
+    axis: logAxis(window.costs, 0.08),
   };
   const y: Quantity = {
     field: "worstRatio",
     title: "largest error over its limit",
-    axis: logAxis([...points.map((point) => point.worstRatio), 1, 1 / designFactor]),
+    axis: logAxis([...window.ratios, 1, 1 / designFactor]),
   };
   const rows = points.map((point) => ({
     stepper: point.stepper,
@@ -36,25 +51,16 @@ export function errorAgainstCost(evidence: ChoiceEvidence, looks: Looks): Chart 
     command: point.command ?? "",
     ended: "completed",
   }));
+  const limit = levelLayers(y, 1, "limit", { dash: [1, 0], side: "above" });
+  const design = levelLayers(y, 1 / designFactor, `limit ÷ ${formatNumber(designFactor)}`, {
+    dash: [6, 4],
+    side: "below",
+  });
+  const levels = designFactor > 1 ? [limit, design] : [limit];
   const layers = [
-    ...levelLayers(y, 1, "limit", { dash: [1, 0], side: "above" }),
-    ...(designFactor > 1
-      ? levelLayers(y, 1 / designFactor, `limit ÷ ${formatNumber(designFactor)}, the design line`, {
-          dash: [6, 4],
-          side: "below" as const,
-        })
-      : []),
-    ...seriesLayers(x, y, looks, [
-      { field: "stepper", title: "stepper" },
-      { field: "knob", title: "step" },
-      { field: "evaluationsPerOrbit", title: "force evaluations per orbit", format: ".4e" },
-      { field: "worstRatio", title: "largest error over its limit", format: ".3e" },
-      { field: "bindingLimit", title: "binding limit" },
-      { field: "evidence", title: "evidence" },
-      ...(points.some((point) => point.command !== undefined)
-        ? [{ field: "command", title: "command" }]
-        : []),
-    ]),
+    ...levels.flatMap((level) => level.line),
+    ...seriesLayers(x, y, looks, TIPS, { clip: true }),
+    ...levels.flatMap((level) => level.words),
   ];
   return makeChart({
     name: "error-against-cost",
@@ -65,7 +71,7 @@ export function errorAgainstCost(evidence: ChoiceEvidence, looks: Looks): Chart 
       "stepper",
     )} at ${plural(points.length, "step or tolerance", "steps or tolerances")}. Below the whole line at 1 every limit holds; below the dashed line each holds ${formatNumber(
       designFactor,
-    )} times over. Further left is cheaper. ${nearestWords(evidence)}`,
+    )} times over. Further left is cheaper. ${window.outside > 0 ? `Outside the axes: ${plural(window.outside, "point")}. ` : ""}${nearestWords(evidence)}`,
     note: mutedNote(looks),
     height: 380,
     rows,
@@ -109,6 +115,30 @@ function nearestWords(evidence: ChoiceEvidence): string {
   return words.length === 0
     ? "No point lies below the limit."
     : `Fewest evaluations per orbit at a point below the limit: ${words.join(", ")}.`;
+}
+
+interface Window {
+  readonly costs: readonly number[];
+  readonly ratios: readonly number[];
+  readonly outside: number;
+}
+
+/** Keeps hopeless steppers from squeezing the others into a corner. */
+function windowOf(points: readonly CostPoint[]): Window {
+  const holding = points.filter((point) => point.worstRatio <= 1).map((point) => point.evaluationsPerOrbit);
+  const mostCost = MOST_COST * Math.min(...holding);
+  const inside = points.filter(
+    (point) =>
+      point.evaluationsPerOrbit <= mostCost &&
+      point.worstRatio >= LEAST_RATIO &&
+      point.worstRatio <= MOST_RATIO,
+  );
+  const drawn = inside.length === 0 ? points : inside;
+  return {
+    costs: drawn.map((point) => point.evaluationsPerOrbit),
+    ratios: drawn.map((point) => point.worstRatio),
+    outside: points.length - drawn.length,
+  };
 }
 
 function nearest(points: readonly CostPoint[]): CostPoint | undefined {

@@ -1,3 +1,4 @@
+import { axisChannel, type Quantity } from "../axes/axis-channel.ts";
 import { logAxis } from "../axes/log-axis.ts";
 import type { Chart } from "../chart.ts";
 import type { ChoiceEvidence, History } from "../evidence.ts";
@@ -6,7 +7,6 @@ import type { Looks } from "../look/stepper-look.ts";
 import { formatNumber, formatTimes } from "../text/number.ts";
 import { dayWords, durationWords, listWords } from "../text/words.ts";
 import { type Layer, makeChart, type Row } from "./make-chart.ts";
-import { axisChannel, type Quantity } from "./series-layers.ts";
 
 interface Measure {
   readonly field: "energyRelative" | "phaseRad" | "alongTrackKm";
@@ -87,12 +87,7 @@ export function historyCharts(evidence: ChoiceEvidence, looks: Looks): Chart[] {
       )}. ${histories.map((history, index) => `${labels[index] ?? ""}: ${endWords(history, measure)}`).join(". ")}.${
         limits.length === 0 ? "" : ` Limits drawn: ${listWords(limits.map((limit) => limit.words))}.`
       }`,
-      note: histories
-        .map(
-          (history) =>
-            `${history.stepper}: ${history.orbit}, e = ${formatNumber(history.eccentricity)}, start at ${formatNumber(history.startAnomalyDeg)}°`,
-        )
-        .join(" · "),
+      note: caseWords(histories),
       height: 300,
       rows,
       layers: [...limitLayers(limits, x, y), ...lines(histories, labels, x, y, looks, measure)],
@@ -219,10 +214,10 @@ function growthFinding(evidence: ChoiceEvidence, measure: Measure): string {
     const drawn = history.points.filter((point) => point[measure.field] > 0);
     const [first, last] = [drawn[0], drawn.at(-1)];
     if (first === undefined || last === undefined || first === last) return [];
-    return [`that of ${history.stepper} ${formatTimes(last[measure.field] / first[measure.field])} times`];
+    return [`${formatTimes(last[measure.field] / first[measure.field])} times for ${history.stepper}`];
   });
   const from = evidence.histories[0]?.points[0]?.days ?? 0;
-  return `From day ${formatNumber(from, 2)} to the end the ${measure.words} grows: ${listWords(parts)}`;
+  return `From day ${formatNumber(from, 2)} to the end the ${measure.words} grows ${listWords(parts)}`;
 }
 
 function trackFinding(evidence: ChoiceEvidence, measure: Measure): string {
@@ -238,6 +233,16 @@ function trackFinding(evidence: ChoiceEvidence, measure: Measure): string {
     return `${history.stepper} stays within ${formatNumber(most, 2)} km`;
   });
   return `Along the track ${listWords(parts)}${whole === undefined ? "" : ` (limit ${formatNumber(whole)} km)`}`;
+}
+
+/** The cells drawn, once where all are of one orbit and start. */
+function caseWords(histories: readonly History[]): string {
+  const cells = histories.map(
+    (history) =>
+      `orbit ${history.orbit}, e = ${formatNumber(history.eccentricity, 5)}, start at ${formatNumber(history.startAnomalyDeg)}°`,
+  );
+  if (new Set(cells).size === 1) return `Cell drawn: ${cells[0] ?? ""}.`;
+  return `Cells drawn: ${histories.map((history, index) => `${history.stepper}, ${cells[index] ?? ""}`).join("; ")}.`;
 }
 
 function endWords(history: History, measure: Measure): string {

@@ -1,4 +1,5 @@
 import type { LimitErrors } from "../../choose/choice.ts";
+import { axisChannel, type Quantity } from "../axes/axis-channel.ts";
 import { logAxis } from "../axes/log-axis.ts";
 import type { Chart } from "../chart.ts";
 import type { ChoiceEvidence } from "../evidence.ts";
@@ -6,7 +7,6 @@ import { colour } from "../look/palette.ts";
 import { formatNumber, formatTimes } from "../text/number.ts";
 import { limitValue, limitWords } from "../text/words.ts";
 import { type Layer, makeChart, type Row } from "./make-chart.ts";
-import { axisChannel, type Quantity } from "./series-layers.ts";
 
 interface Subject {
   readonly stepper: string;
@@ -109,6 +109,7 @@ export function margins(evidence: ChoiceEvidence): Chart | null {
         encoding: {
           x: axisChannel(x, true),
           y,
+          yOffset: { field: "label", type: "nominal", scale: { domain: labels, paddingOuter: 1.5 } },
           color: {
             field: "label",
             type: "nominal",

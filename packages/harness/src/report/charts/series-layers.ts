@@ -1,21 +1,7 @@
-import type { LogAxis } from "../axes/log-axis.ts";
+import { axisChannel, type Quantity } from "../axes/axis-channel.ts";
 import { colour } from "../look/palette.ts";
 import { type Looks, lookScales } from "../look/stepper-look.ts";
 import type { Layer } from "./make-chart.ts";
-
-/** A quantity on an axis: the row's field, its words with unit, and the axis it is drawn on. */
-export interface Quantity {
-  readonly field: string;
-  readonly title: string;
-  readonly axis: LogAxis | LinearAxis;
-}
-
-export interface LinearAxis {
-  readonly domain: [number, number];
-  readonly scale: { readonly type: "linear"; readonly domain: [number, number]; readonly nice: false };
-  readonly values?: never;
-  readonly labelExpr?: never;
-}
 
 export interface Tip {
   readonly field: string;
@@ -26,12 +12,22 @@ export interface Tip {
 
 const FADED = 0.1;
 
+/** The layer of grey marks: they only carry tooltips, so a drawing that has none does without. */
+export const MUTED_MARKS = "muted_marks";
+
 /**
  * Lines with marks, one per stepper. Rows carry `stepper`, `symplectic` and `ended`; those of muted steppers are drawn in grey behind (whole
  * lines symplectic, dashed not), those of runs that left the orbit as a cross at the upper edge. A parameter `picked`, bound to the legend, brings
- * steppers out and lets the rest fade.
+ * steppers out and lets the rest fade. With `clip`, what lies outside the axes is cut off.
  */
-export function seriesLayers(x: Quantity, y: Quantity, looks: Looks, tips: readonly Tip[]): Layer[] {
+export function seriesLayers(
+  x: Quantity,
+  y: Quantity,
+  looks: Looks,
+  tips: readonly Tip[],
+  options: { readonly clip?: boolean } = {},
+): Layer[] {
+  const clip = options.clip === true;
   const scales = lookScales(looks.highlighted);
   const shown = { field: "stepper", oneOf: scales.domain };
   const drawable = `isValid(datum[${JSON.stringify(y.field)}]) && datum[${JSON.stringify(y.field)}] > 0 && datum.ended !== 'diverged'`;
@@ -63,7 +59,7 @@ export function seriesLayers(x: Quantity, y: Quantity, looks: Looks, tips: reado
     layers.push(
       {
         transform: [{ filter: { not: shown } }, { filter: drawable }],
-        mark: { type: "line", strokeWidth: 1 },
+        mark: { type: "line", strokeWidth: 1, clip },
         encoding: {
           ...position,
           detail: { field: "stepper", type: "nominal" },
@@ -74,7 +70,8 @@ export function seriesLayers(x: Quantity, y: Quantity, looks: Looks, tips: reado
       },
       {
         transform: [{ filter: { not: shown } }, { filter: drawable }],
-        mark: { type: "circle", size: 10 },
+        name: MUTED_MARKS,
+        mark: { type: "circle", size: 10, clip },
         encoding: { ...position, color: mutedColour, opacity: mutedFading, tooltip },
       },
     );
@@ -82,7 +79,7 @@ export function seriesLayers(x: Quantity, y: Quantity, looks: Looks, tips: reado
   layers.push(
     {
       transform: [{ filter: shown }, { filter: drawable }],
-      mark: { type: "line", strokeWidth: 1.8 },
+      mark: { type: "line", strokeWidth: 1.8, clip },
       encoding: {
         ...position,
         color: lookColour,
@@ -98,7 +95,7 @@ export function seriesLayers(x: Quantity, y: Quantity, looks: Looks, tips: reado
     {
       params: [{ name: "picked", select: { type: "point", fields: ["stepper"] }, bind: "legend" }],
       transform: [{ filter: shown }, { filter: drawable }],
-      mark: { type: "point", filled: true, size: 55, stroke: colour("paper"), strokeWidth: 0.6 },
+      mark: { type: "point", filled: true, size: 55, stroke: colour("paper"), strokeWidth: 0.6, clip },
       encoding: {
         ...position,
         color: lookColour,
@@ -124,61 +121,4 @@ export function seriesLayers(x: Quantity, y: Quantity, looks: Looks, tips: reado
     },
   );
   return layers;
-}
-
-/** A horizontal line at a value, with its words at the left end; above the line or below it. */
-export function levelLayers(
-  y: Quantity,
-  value: number,
-  words: string,
-  options: { readonly dash: number[]; readonly side: "above" | "below" },
-): Layer[] {
-  const row = { values: [{ level: value, words }] };
-  const encoding = { y: { field: "level", type: "quantitative" as const, scale: y.axis.scale } };
-  const text = {
-    type: "text" as const,
-    align: "left" as const,
-    baseline: options.side === "above" ? ("bottom" as const) : ("top" as const),
-    dx: 4,
-    dy: options.side === "above" ? -3 : 4,
-    fontSize: 11,
-  };
-  const label = { ...encoding, x: { value: 0 }, text: { field: "words", type: "nominal" as const } };
-  return [
-    {
-      data: row,
-      mark: { type: "rule", color: colour("limit"), strokeWidth: 1.4, strokeDash: options.dash },
-      encoding,
-    },
-    {
-      data: row,
-      mark: { ...text, stroke: colour("paper"), strokeWidth: 4, strokeJoin: "round" },
-      encoding: label,
-    },
-    { data: row, mark: { ...text, color: colour("limit") }, encoding: label },
-  ];
-}
-
-/** Position channel with its axis; the words of a vertical one stand level above it. */
-export function axisChannel(
-  quantity: Quantity,
-  grid = false,
-): {
-  readonly field: string;
-  readonly type: "quantitative";
-  readonly scale: LogAxis["scale"] | LinearAxis["scale"];
-  readonly title: string;
-  readonly axis: { grid: boolean; values?: number[]; labelExpr?: string; labelOverlap: boolean | "greedy" };
-} {
-  const { axis } = quantity;
-  return {
-    field: quantity.field,
-    type: "quantitative",
-    scale: axis.scale,
-    title: quantity.title,
-    axis:
-      axis.values === undefined
-        ? { grid, labelOverlap: "greedy" }
-        : { grid, values: axis.values, labelExpr: axis.labelExpr, labelOverlap: "greedy" },
-  };
 }

@@ -1,4 +1,5 @@
 import type { RankedStepper } from "../../choose/choice.ts";
+import { axisChannel, type Quantity } from "../axes/axis-channel.ts";
 import { logAxis } from "../axes/log-axis.ts";
 import type { Chart } from "../chart.ts";
 import type { ChoiceEvidence } from "../evidence.ts";
@@ -6,7 +7,6 @@ import { colour } from "../look/palette.ts";
 import { formatNumber } from "../text/number.ts";
 import { knobWords, plural } from "../text/words.ts";
 import { makeChart, type Row } from "./make-chart.ts";
-import { axisChannel, type Quantity } from "./series-layers.ts";
 
 const MOST_ROWS = 16;
 
@@ -46,7 +46,7 @@ export function stepBands(evidence: ChoiceEvidence): Chart | null {
   return makeChart({
     name: "step-bands",
     section: "cost",
-    title: titleOf(choice.ranking.find((candidate) => candidate.stepper === choice.choice) ?? first),
+    title: titleOf(ranked.find((candidate) => candidate.stepper === choice.choice) ?? first),
     description: `For ${plural(rows.length, "stepper")} of the ranking with a fixed step: the band of steps verified in full as a bar, the recommended step as a disc, and the coarsest step that still holds every limit as an upright stroke, in seconds on a logarithmic scale. ${rows
       .slice(0, 6)
       .map((row) => `${row.stepper}: ${row.knob}, ${row.edge}`)

@@ -1,3 +1,4 @@
+import type { LinearAxis, Quantity } from "../axes/axis-channel.ts";
 import { logAxis } from "../axes/log-axis.ts";
 import type { Chart } from "../chart.ts";
 import type { ChoiceEvidence, SurveyPoint } from "../evidence.ts";
@@ -6,7 +7,7 @@ import { formatCount, formatNumber, formatTimes } from "../text/number.ts";
 import { plural } from "../text/words.ts";
 import { makeChart, type Row } from "./make-chart.ts";
 import { mutedNote } from "./muted-note.ts";
-import { type LinearAxis, type Quantity, seriesLayers, type Tip } from "./series-layers.ts";
+import { seriesLayers, type Tip } from "./series-layers.ts";
 
 interface Measure {
   readonly field: "phase" | "energy" | "period";
@@ -115,7 +116,11 @@ function stepsOf(point: SurveyPoint): number | null {
 
 function quantityOf(measure: Measure, points: readonly SurveyPoint[]): Quantity {
   const values = points.filter((point) => point.ended === "completed").map((point) => point[measure.field]);
-  return { field: measure.field, title: measure.axisTitle, axis: logAxis(values) };
+  // Room above the data for the crosses of runs that left the orbit.
+  const top = points.some((point) => point.ended === "diverged")
+    ? 6 * Math.max(...values.map((value) => value ?? 0))
+    : null;
+  return { field: measure.field, title: measure.axisTitle, axis: logAxis([...values, top]) };
 }
 
 function linearAxis(values: readonly number[]): LinearAxis {
@@ -142,7 +147,7 @@ function eccentricityFinding(evidence: ChoiceEvidence, measure: Measure): string
   const last = atHighest.at(-1);
   return last === undefined || last === best
     ? base
-    : `${base}; ${last.stepper} has the largest, ${formatNumber(errorOf(last, measure), 2)}${measure.unit}`;
+    : `${base}; ${last.stepper} has the largest of those in orbit, ${formatNumber(errorOf(last, measure), 2)}${measure.unit}`;
 }
 
 function stepFinding(evidence: ChoiceEvidence, points: readonly SurveyPoint[], measure: Measure): string {
@@ -159,8 +164,8 @@ function stepFinding(evidence: ChoiceEvidence, points: readonly SurveyPoint[], m
   if (middle === null)
     return `How the ${measure.words} falls as the step shrinks, at e = ${formatNumber(evidence.survey.eccentricity)}`;
   return middle >= 1
-    ? `At e = ${formatNumber(evidence.survey.eccentricity)}, halving the step divides the ${measure.words} of ${subject} by ${formatTimes(middle)} (median)`
-    : `At e = ${formatNumber(evidence.survey.eccentricity)}, halving the step does not lessen the ${measure.words} of ${subject} (median factor ${formatNumber(1 / middle, 2)})`;
+    ? `At e = ${formatNumber(evidence.survey.eccentricity)}, twice as many steps divide the ${measure.words} of ${subject} by ${formatTimes(middle)} (median)`
+    : `At e = ${formatNumber(evidence.survey.eccentricity)}, twice as many steps do not lessen the ${measure.words} of ${subject} (median factor ${formatNumber(1 / middle, 2)})`;
 }
 
 function endWords(points: readonly SurveyPoint[], measure: Measure): string {

@@ -1,6 +1,7 @@
 import type { Choice, LimitErrors, RankedStepper } from "../../choose/choice.ts";
 import { html, type Markup } from "../text/html.ts";
 import { formatCount, formatNumber, formatTimes } from "../text/number.ts";
+import { commandCode } from "../text/whole-words.ts";
 import { limitValue, limitWords } from "../text/words.ts";
 import { type Column, table } from "./table.ts";
 import { worstCellWords } from "./worst-cell.ts";
@@ -29,7 +30,7 @@ function limitRows(errors: LimitErrors, designFactor: number): Markup[][] {
     html`${error.value === null ? "diverged or not defined" : limitValue(key, error.value)}`,
     factorCell(error.factor),
     gauge(error.factor, designFactor),
-    html`${worstCellWords(error)}<br><code>${error.command}</code>`,
+    html`${worstCellWords(error)}<br>${commandCode(error.command)}`,
   ]);
 }
 

@@ -1,9 +1,11 @@
 import type { Spec } from "vega";
 import type { TopLevelSpec } from "vega-lite";
 import type { Chart, ChartSection } from "../chart.ts";
+import { MUTED_MARKS } from "../charts/series-layers.ts";
 import { withColourVariables } from "../look/palette.ts";
 import { compileSpec } from "../render/to-svg.ts";
 import { html, type Markup } from "../text/html.ts";
+import { wholeWords } from "../text/whole-words.ts";
 
 const SECTIONS: readonly {
   readonly section: ChartSection;
@@ -30,7 +32,7 @@ export function figures(charts: readonly Chart[], drawingOf: (name: string) => M
 
 function figure(chart: Chart, drawing: Markup): Markup {
   const id = `chart-${chart.name}`;
-  return html`<figure id="${id}"><h4 id="${id}-title">${chart.title}</h4>
+  return html`<figure id="${id}"><h4 id="${id}-title">${wholeWords(chart.title)}</h4>
 <div class="drawing" role="img" aria-labelledby="${id}-title" aria-describedby="${id}-text" data-chart="${chart.name}">${drawing}</div>
 <figcaption id="${id}-text">${chart.description} ${chart.note}</figcaption></figure>
 `;
@@ -66,4 +68,11 @@ export function pageSpec(spec: TopLevelSpec): TopLevelSpec {
     ...rest,
     config: { ...spec.config, legend: { ...spec.config?.legend, disable: true } },
   } as TopLevelSpec;
+}
+
+/** The same without the marks that only carry tooltips. */
+export function drawingSpec(spec: TopLevelSpec): TopLevelSpec {
+  const page = pageSpec(spec);
+  if (!("layer" in page)) return page;
+  return { ...page, layer: page.layer.filter((layer) => layer.name !== MUTED_MARKS) };
 }

@@ -1,6 +1,7 @@
 import type { ChoiceEvidence } from "../evidence.ts";
 import { html, type Markup } from "../text/html.ts";
 import { formatCount, formatNumber } from "../text/number.ts";
+import { commandCode } from "../text/whole-words.ts";
 import { durationWords, plural } from "../text/words.ts";
 
 /** How the numbers came about, for the reader who has to defend them. */
@@ -40,7 +41,7 @@ export function provenance(evidence: ChoiceEvidence): Markup {
 <dl class="facts-list">
 ${row("perigauge", html`${version}`)}
 ${row("Node.js", html`${node}`)}
-${row("command", html`<code>${command}</code>`)}
+${row("command", commandCode(command))}
 ${row("seed", html`<code>${String(seed)}</code>`)}
 ${row("digest of the result", html`<code>${digest}</code>`)}
 ${row("runs", html`${formatCount(cellsRun)}`)}

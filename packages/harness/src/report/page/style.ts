@@ -61,8 +61,9 @@ dl{margin:.6em 0}dt{font-weight:700}dd{margin:0;min-width:0}
 .chips [aria-pressed=true]{background:var(--ink);color:var(--paper);border-color:var(--ink)}
 .chips [aria-pressed=true] svg{background:var(--paper)}
 .figures{display:grid;gap:34px 40px;grid-template-columns:repeat(auto-fit,minmax(min(100%,330px),1fr));align-items:start}
-.figures.wide{grid-template-columns:minmax(0,1fr)}
-@media (min-width:1100px){.figures.wide{grid-template-columns:repeat(2,minmax(0,1fr))}.figures.wide>:first-child{grid-column:1/-1}}
+.figures.wide>:first-child{grid-column:1/-1}
+#chart-orbit-in-the-plane{max-width:660px}
+.whole,code span{display:inline-block;max-width:100%}
 figure{margin:0;min-width:0;scroll-margin-top:120px}
 figcaption{font-size:.88rem;line-height:1.5;margin-top:.5em;max-width:80ch}
 .drawing{min-height:120px;overflow:hidden}
@@ -90,7 +91,7 @@ dl.why div,dl.facts-list div{grid-template-columns:1fr}
 body{font-size:10.5pt}main{max-width:none;padding:0}
 .contents,.skip,#tip,.chips .all{display:none}
 .legend{position:static}
-.figures{grid-template-columns:repeat(2,minmax(0,1fr));gap:18px 20px}
+.figures,.figures.wide{grid-template-columns:repeat(2,minmax(0,1fr));gap:18px 20px}
 figure,tr{break-inside:avoid}h2,h3,h4{break-after:avoid}
 }
 `;

@@ -1,6 +1,7 @@
 import type { Choice, RankedStepper } from "../../choose/choice.ts";
 import { html, type Markup } from "../text/html.ts";
 import { formatCount, formatNumber, formatTimes } from "../text/number.ts";
+import { wholeWords } from "../text/whole-words.ts";
 import { durationWords, knobWords, limitWords, plural } from "../text/words.ts";
 import { worstCellWords } from "./worst-cell.ts";
 
@@ -24,7 +25,7 @@ function recommendation(choice: Choice, chosen: RankedStepper): Markup {
     chosen.stepSeconds === null
       ? html`tolerance <b>${formatNumber(chosen.tolerance)}</b>`
       : html`a step of <b>${knobWords(chosen)}</b>`;
-  return html`<h1>Use <b>${chosen.stepper}</b> with ${knob}</h1>
+  return html`<h1>Use <b>${wholeWords(chosen.stepper)}</b> with ${knob}</h1>
 <p class="lead">${
     binding === undefined || chosen.bindingLimit === null
       ? "Every limit holds."
@@ -40,7 +41,7 @@ ${
     : html`<li><span class="figure">${formatNumber(chosen.stepsPerOrbit, 4)}</span> steps per orbit, shortest orbit</li>`
 }
 </ul>
-<p>${bandWords(chosen)} ${edgeWords(chosen)} ${runnerUpWords(choice, chosen)}</p>`;
+<p>${wholeWords(`${bandWords(chosen)} ${edgeWords(chosen)} ${runnerUpWords(choice, chosen)}`)}</p>`;
 }
 
 function noneQualifies(choice: Choice): Markup {

@@ -1,6 +1,8 @@
+/** Keeps a number and what belongs to it on one line. */
+export const NO_BREAK = "\u00a0";
 const SUPERSCRIPTS = "⁰¹²³⁴⁵⁶⁷⁸⁹";
 /** Groups digits without letting a line break fall between them. */
-const GROUP = " ";
+const GROUP = "\u202f";
 
 /** An integer as raised digits: -12 gives `⁻¹²`. */
 export function superscript(exponent: number): string {
@@ -21,7 +23,7 @@ export function formatNumber(value: number | null | undefined, digits = 3): stri
     const decimals = Math.max(0, digits - 1 - exponent);
     return groupDigits(dropZeros(Number(value.toPrecision(digits)).toFixed(decimals)));
   }
-  return minus(`${dropZeros(mantissa)} × 10${superscript(exponent)}`);
+  return minus(`${dropZeros(mantissa)}${NO_BREAK}×${NO_BREAK}10${superscript(exponent)}`);
 }
 
 /** Every digit of a whole number, in groups of three. */

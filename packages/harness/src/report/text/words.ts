@@ -1,6 +1,6 @@
 import { LIMIT_KEYS, type LimitKey } from "../../choose/choice.ts";
 import type { Scenario } from "../../scenario/scenario.ts";
-import { formatCount, formatNumber } from "./number.ts";
+import { formatCount, formatNumber, NO_BREAK } from "./number.ts";
 
 const LIMIT_WORDS: Readonly<Record<LimitKey, { readonly words: string; readonly unit: string }>> = {
   alongTrackKm: { words: "position along the track", unit: "km" },
@@ -62,7 +62,7 @@ export function listWords(items: readonly string[]): string {
 }
 
 function withUnit(text: string, unit: string): string {
-  return unit === "" ? text : `${text} ${unit}`;
+  return unit === "" ? text : `${text}${NO_BREAK}${unit}`;
 }
 
 function isLimitKey(name: string): name is LimitKey {

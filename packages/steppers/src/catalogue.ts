@@ -2,6 +2,7 @@ import {
   fromAdams,
   fromComposition,
   fromExtrapolation,
+  fromGauss,
   fromGaussJackson,
   fromHermite,
   fromLogarithmicLeapfrog,
@@ -12,6 +13,7 @@ import {
   fromSundman,
   fromTableau,
 } from "./build/stepper-of.ts";
+import { gaussLegendre } from "./methods/collocation/gauss-legendre.ts";
 import { hermite4 } from "./methods/hermite/hermite-4.ts";
 import { hasEmbedded } from "./methods/method.ts";
 import { adamsBashforthMoulton } from "./methods/multistep/adams-bashforth-moulton.ts";
@@ -28,6 +30,7 @@ export const catalogue: readonly Stepper[] = [
   ...nystromTableaus.filter(hasEmbedded).map(fromNystromPair),
   ...splittings.map(fromSplitting),
   ...compositions.flatMap(fromComposition),
+  ...gaussLegendre.map(fromGauss),
   ...adamsBashforthMoulton.map(fromAdams),
   fromGaussJackson(gaussJackson8),
   ...extrapolations.flatMap(fromExtrapolation),
@@ -38,6 +41,7 @@ export const catalogue: readonly Stepper[] = [
 
 /** Other usual names of steppers in the catalogue. */
 const aliases: ReadonlyMap<string, string> = new Map([
+  ["implicit-midpoint", "gauss-legendre-2"],
   ["yoshida-4", "forest-ruth-4"],
   ["yoshida-4-kdk", "forest-ruth-4-kdk"],
 ]);

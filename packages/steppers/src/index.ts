@@ -1,5 +1,7 @@
 // The catalogue and steppers of one's own.
 
+export type { CollocationProgram } from "./build/collocation.ts";
+export type { PairProgram } from "./build/pair.ts";
 // Steps as straight-line programs, for proofs and other emitters.
 export type { BuildStep, Setting } from "./build/step-program.ts";
 export { catalogue, findStepper } from "./catalogue.ts";
@@ -14,6 +16,8 @@ export { interpret } from "./program/interpret.ts";
 export { type Lowered, lower } from "./program/lower.ts";
 export type { BinaryKind, Dimension, Operation, Program, StepProgram, Value } from "./program/program.ts";
 export type { ProgramStepper } from "./run/fixed-step.ts";
+export type { ImplicitStepper } from "./run/implicit.ts";
+export type { PairStepper } from "./run/variable-step.ts";
 export type {
   Acceleration,
   Jerk,

@@ -1,6 +1,7 @@
 import { parseRow } from "../exact/coefficients.ts";
 import { type Rational, toDouble } from "../exact/rational.ts";
 import type {
+  Collocation,
   Composition,
   EmbeddedNystrom,
   EmbeddedTableau,
@@ -14,8 +15,10 @@ import type {
 } from "../methods/method.ts";
 import { type Dense, nystromInterpolant, rungeKuttaInterpolant } from "../run/dense.ts";
 import { fixedStep, type ProgramStepper } from "../run/fixed-step.ts";
+import { type ImplicitStepper, implicitStep } from "../run/implicit.ts";
 import { type PairStepper, variableStep } from "../run/variable-step.ts";
 import { buildAdams } from "./adams.ts";
+import { buildCollocation, type CollocationRows, gaussRows } from "./collocation.ts";
 import { compose } from "./composition.ts";
 import { denseRows } from "./dense-rows.ts";
 import { buildDenseStages } from "./dense-stages.ts";
@@ -200,5 +203,18 @@ export function fromSundman(method: Sundman): ProgramStepper {
   return fixedStep(
     { ...claims, stages: () => liveStages(a.map(parseRow), parseRow(b)).filter(Boolean).length },
     (setting) => buildSundman(method.tableau, setting),
+  );
+}
+
+/** Gauss collocation, solved by fixed-point iteration. */
+export function fromGauss(method: Collocation): ImplicitStepper {
+  const claims = { ...published(method), family: "implicit-symplectic", explicit: false } as const;
+  let rows: CollocationRows | undefined;
+  return implicitStep(
+    { ...claims, symplectic: true, timeReversible: true, stages: () => parseRow(method.nodes).length },
+    (setting) => {
+      rows ??= gaussRows(method);
+      return buildCollocation(rows, setting);
+    },
   );
 }

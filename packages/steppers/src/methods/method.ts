@@ -127,3 +127,8 @@ export interface Multistep extends Published {
   /** Accelerations (and velocities) of this many past points, the present one included, enter a step. */
   readonly backValues: number;
 }
+
+/** Collocation nodes in [0, 1]; weights follow by integrating the interpolation polynomial, exactly. */
+export interface Collocation extends Published {
+  readonly nodes: Coefficients;
+}

@@ -1,0 +1,16 @@
+import type { Collocation } from "../method.ts";
+
+/** Nodes: 0 and the zeros of (P7 + P8)(x) / (1 + x), x = 2c - 1. */
+export const gaussRadau15: Collocation = {
+  id: "gauss-radau-15",
+  title: "Gauss–Radau 15, variable step",
+  order: 15,
+  source:
+    "E. Everhart, Celest. Mech. 10 (1974) 35-55; E. Everhart, in: Dynamics of Comets, IAU Coll. 83, Reidel (1985) 185-202",
+  nodes: `
+    0 0.05626256053692214646565219103231117577977 0.1802406917368923649875799428091817845421
+    0.3526247171131696373739077701712412028080 0.5471536263305553830014485576523488546404
+    0.7342101772154105315232106083066100025630 0.8853209468390957680903597629324853729223
+    0.9775206135612875018911745004291549400778
+  `,
+};

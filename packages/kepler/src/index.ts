@@ -39,7 +39,7 @@ export { solveHyperbolicKepler } from "./equation/solve-hyperbolic-kepler.ts";
 export { solveKepler } from "./equation/solve-kepler.ts";
 export { InvalidInputError } from "./errors.ts";
 // Elementary functions, the same bits in every engine
-export { arctangent2 } from "./functions/arctangent.ts";
+export { arctangent2, arctangentNodes } from "./functions/arctangent.ts";
 export { cos, sin, sinCosInto } from "./functions/sin-cos.ts";
 // Pairs of bodies
 export {
@@ -72,7 +72,9 @@ export {
   stateAtTrueAnomalyDegrees,
 } from "./planar/planar-state.ts";
 // Reference for scoring
+export { cellShift, cellSize } from "./track/anomaly-table.ts";
 export { ReferenceTrack, referenceTrack } from "./track/reference-track.ts";
+export { type StepWords, stepWords, type TrackConstants, trackConstants } from "./track/track-constants.ts";
 // Units
 export { type Normalisation, normalisation, type PhysicalScale } from "./units/normalisation.ts";
 export {

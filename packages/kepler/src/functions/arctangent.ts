@@ -13,8 +13,8 @@ import { splitter } from "../arithmetic/two-product.ts";
 
 /** Tangents of the nodes are k/32. */
 const nodes = 32;
-/** Angles of the nodes, high word and low word. */
-const angles: Float64Array = nodeAngles();
+/** Angles of the nodes, high word and low word: arctan(k/32) at 2 k and 2 k + 1, k = 0 .. 32. */
+export const arctangentNodes: Float64Array = nodeAngles();
 
 /** arctan(k/32): a polynomial within 1e-5, then two corrections by the tangent of what remains, in double-double. */
 function nodeAngles(): Float64Array {
@@ -59,8 +59,8 @@ export function arctangent2(y: number, x: number): number {
   const z = d * d;
   const series = d * z * (-1 / 3 + z * (1 / 5 + z * (-1 / 7 + z * (1 / 9 - z * (1 / 11)))));
   // angle = hi + lo, with hi a node (or pi/2, pi and their differences with it) larger than what follows.
-  let hi = angles[2 * k]!;
-  let lo = angles[2 * k + 1]! + series;
+  let hi = arctangentNodes[2 * k]!;
+  let lo = arctangentNodes[2 * k + 1]! + series;
   let rest = d;
   if (steep) {
     const right = 0.5 * pi.hi;

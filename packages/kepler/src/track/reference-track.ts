@@ -1,18 +1,9 @@
-import { twoPi } from "../arithmetic/constants.ts";
-import {
-  type DoubleDouble,
-  ddDivide,
-  ddMultiply,
-  ddOf,
-  ddScale,
-  ddSubtract,
-} from "../arithmetic/double-double.ts";
 import { splitter } from "../arithmetic/two-product.ts";
 import { anomalyCorrection } from "../equation/anomaly-correction.ts";
 import { refuse, requireFinite } from "../errors.ts";
 import type { PlanarOrbit } from "../planar/planar-orbit.ts";
 import { cellShift, cellSize } from "./anomaly-table.ts";
-import { anomalyTable } from "./table-cache.ts";
+import { stepWords, type TrackConstants, trackConstants } from "./track-constants.ts";
 
 /** Adding and subtracting 1.5 2^52 rounds to the nearest integer. */
 const toNearest = 6755399441055744;
@@ -26,12 +17,6 @@ const words: Uint32Array = new Uint32Array(bits.buffer);
 /** Mean anomalies of a block in turns: high words, then low words. */
 const meanHi: Float64Array = new Float64Array(blockSize);
 const meanLo: Float64Array = new Float64Array(blockSize);
-
-/** Word of `value` with multiples of 2^-fractionBits. */
-function upperWord(value: DoubleDouble, fractionBits: number): number {
-  const scale = 2 ** fractionBits;
-  return Math.round(value.hi * scale) / scale;
-}
 
 /**
  * The exact states of one bound orbit at many times (normalised units): what a trajectory is scored against.
@@ -47,41 +32,12 @@ function upperWord(value: DoubleDouble, fractionBits: number): number {
  */
 export class ReferenceTrack {
   readonly orbit: PlanarOrbit;
-  readonly #turnsPerTime: DoubleDouble;
-  readonly #startHi: number;
-  readonly #startLo: number;
-  readonly #e: number;
-  readonly #axisRatio: number;
-  readonly #offset: number;
-  readonly #base: number;
-  readonly #rows: Float64Array;
-  /** Semi-major axis times the direction of periapsis, and the same quarter turn ahead in the sense of motion. */
-  readonly #px: number;
-  readonly #py: number;
-  readonly #qx: number;
-  readonly #qy: number;
-  readonly #meanMotion: number;
+  /** What a row is computed from, for whoever computes rows in another way. */
+  readonly constants: TrackConstants;
 
   constructor(orbit: PlanarOrbit) {
     this.orbit = orbit;
-    const table = anomalyTable(orbit.eccentricity);
-    const start = ddDivide(orbit.meanAnomaly, twoPi);
-    const px = ddMultiply(orbit.semiMajorAxis, orbit.periapsisX);
-    const py = ddMultiply(orbit.semiMajorAxis, orbit.periapsisY);
-    const forward = orbit.angularMomentum.hi > 0;
-    this.#turnsPerTime = ddDivide(orbit.meanMotion, twoPi);
-    this.#startHi = start.hi;
-    this.#startLo = start.lo;
-    this.#e = orbit.eccentricity.hi;
-    this.#axisRatio = orbit.axisRatio.hi;
-    this.#offset = table.offset;
-    this.#base = table.firstCell;
-    this.#rows = table.rows;
-    this.#px = px.hi;
-    this.#py = py.hi;
-    this.#qx = forward ? -py.hi : py.hi;
-    this.#qy = forward ? px.hi : -px.hi;
-    this.#meanMotion = orbit.meanMotion.hi;
+    this.constants = trackConstants(orbit);
   }
 
   /**
@@ -95,17 +51,8 @@ export class ReferenceTrack {
     if (!(Number.isInteger(firstStep) && Math.abs(firstStep) <= largestStep - count)) {
       refuse("statesAtSteps.firstStep", "stepIndex", firstStep);
     }
-    // Turns a step, whole turns dropped, in words that an index of 34 bits multiplies exactly.
-    const exact = ddScale(this.#turnsPerTime, h);
-    const fraction = ddSubtract(exact, ddOf(Math.round(exact.hi)));
-    const w1 = upperWord(fraction, 19);
-    const rest1 = ddSubtract(fraction, ddOf(w1));
-    const w2 = upperWord(rest1, 38);
-    const rest2 = ddSubtract(rest1, ddOf(w2));
-    const w3 = upperWord(rest2, 57);
-    const w4 = ddSubtract(rest2, ddOf(w3)).hi;
-    const startHi = this.#startHi;
-    const startLo = this.#startLo;
+    const { w1, w2, w3, w4 } = stepWords(this.constants.turnsPerTime, h);
+    const { startHi, startLo } = this.constants;
     for (let done = 0; done < count; done += blockSize) {
       const size = Math.min(count - done, blockSize);
       for (let j = 0; j < size; j++) {
@@ -155,7 +102,7 @@ export class ReferenceTrack {
 
   /** Mean anomaly at a time, in turns within [-1/2, 1/2], into place j of the block: an exact product, whole turns dropped, plus the start. */
   #reduceTime(hi: number, lo: number, j: number): void {
-    const rate = this.#turnsPerTime;
+    const { turnsPerTime: rate, startHi, startLo } = this.constants;
     const p = hi * rate.hi;
     const ta = splitter * hi;
     const a1 = ta - (ta - hi);
@@ -169,24 +116,15 @@ export class ReferenceTrack {
     const ut = u - f;
     const uLow = f - (u - ut) + (pLow - ut);
     const g = u - (u + toNearest - toNearest);
-    const v = g + this.#startHi;
+    const v = g + startHi;
     const vt = v - g;
     meanHi[j] = v - (v + toNearest - toNearest);
-    meanLo[j] = g - (v - vt) + (this.#startHi - vt) + (uLow + this.#startLo);
+    meanLo[j] = g - (v - vt) + (startHi - vt) + (uLow + startLo);
   }
 
   /** States of the first `size` mean anomalies of the block, into rows from `to`. */
   #writeStates(size: number, rows: Float64Array, to: number): void {
-    const table = this.#rows;
-    const e = this.#e;
-    const axisRatio = this.#axisRatio;
-    const offset = this.#offset;
-    const base = this.#base;
-    const px = this.#px;
-    const py = this.#py;
-    const qx = this.#qx;
-    const qy = this.#qy;
-    const meanMotion = this.#meanMotion;
+    const { rows: table, e, axisRatio, offset, base, px, py, qx, qy, meanMotion } = this.constants;
     let at = to;
     for (let j = 0; j < size; j++) {
       const hi = meanHi[j]!;

@@ -24,6 +24,8 @@ import {
 import { type GrowthValue, StepSummary } from "./step-summary.ts";
 
 const TWO_PI = 2 * Math.PI;
+/** Orbits by which a step may overshoot the end of an orbit and still belong to it: time is rounded. */
+const ORBIT_SLACK = 1e-9;
 
 /** What is to be measured of a run. Maxima come out with the same digits whatever else is asked for. */
 export interface ScoringPlan {
@@ -224,8 +226,7 @@ export class RunScorer {
     }
     for (let start = from; start < to; ) {
       const orbit = this.orbitOf(chunk, start);
-      let stop = start + 1;
-      while (stop < to && this.orbitOf(chunk, stop) === orbit) stop++;
+      const stop = this.orbitEnd(chunk, orbit, start, to);
       for (const name of this.wanted) {
         this.summaries?.[name].accept(this.errors[name], start, stop, this.lengths, orbit);
       }
@@ -234,11 +235,22 @@ export class RunScorer {
   }
 
   private orbitOf(chunk: Chunk, row: number): number {
-    const orbits =
-      this.resolved.stepper.uneven || this.resolved.stepsPerOrbit === null
-        ? chunk.times[2 * row]! / TWO_PI
-        : (chunk.firstStep + row) / this.resolved.stepsPerOrbit;
-    return Math.max(1, Math.ceil(orbits - 1e-9));
+    const { step, stepper } = this.resolved;
+    const time =
+      stepper.uneven || step === null ? chunk.times[2 * row]! : (chunk.firstStep + row) * step;
+    return Math.max(1, Math.ceil(time / TWO_PI - ORBIT_SLACK));
+  }
+
+  /** First row after `row` that lies beyond the orbit, at most `to`. */
+  private orbitEnd(chunk: Chunk, orbit: number, row: number, to: number): number {
+    const { step, stepper } = this.resolved;
+    const end = (orbit + ORBIT_SLACK) * TWO_PI;
+    if (!stepper.uneven && step !== null) {
+      return Math.max(row + 1, Math.min(to, Math.floor(end / step) - chunk.firstStep + 1));
+    }
+    let stop = row + 1;
+    while (stop < to && chunk.times[2 * stop]! <= end) stop++;
+    return stop;
   }
 
   finish(trajectory: Trajectory): Score {

@@ -19,6 +19,8 @@ export interface StumpffFunctions {
 const one = ddOf(1);
 /** Terms of the series: z^13/29! < 2^-120 at |z| = 1/4. */
 const terms = 13;
+/** Enough for every finite z; an infinite one ends here too, and gives NaN. */
+const mostDoublings = 520;
 
 /**
  * c0 = cos sqrt z, c1 = sin sqrt z/sqrt z, c2 = (1 - c0)/z, c3 = (1 - c1)/z for any real z (hyperbolic functions for z < 0), smooth through
@@ -30,7 +32,7 @@ const terms = 13;
 export function stumpff(z: DoubleDouble): StumpffFunctions {
   let reduced = z;
   let doublings = 0;
-  while (Math.abs(reduced.hi) > 0.25) {
+  while (Math.abs(reduced.hi) > 0.25 && doublings < mostDoublings) {
     reduced = { hi: reduced.hi * 0.25, lo: reduced.lo * 0.25 };
     doublings++;
   }

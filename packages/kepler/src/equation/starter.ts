@@ -11,7 +11,7 @@ export function roughCubeRoot(x: number): number {
   words[0] = 0;
   const y = bits[0]!;
   const y3 = y * y * y;
-  return (y * (y3 + 2 * x)) / (2 * y3 + x);
+  return y * ((y3 + 2 * x) / (2 * y3 + x));
 }
 
 /** 3 pi^2/(pi^2 - 6) and 1.6 pi/(pi^2 - 6). */

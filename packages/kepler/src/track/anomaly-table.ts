@@ -52,9 +52,12 @@ function middleOf(cell: number): number {
   return bits[0]!;
 }
 
-/** Nearest anomaly with at most 7 bits, and no finer than 2^-7 of the scale of the passage. */
+/** Nearest anomaly with at most 7 bits, and no finer than 2^-6 of the power of two below the scale of the passage. */
 function nodeNear(anomaly: number, scale: number): number {
-  const quantum = 2 ** (Math.floor(Math.log2(Math.max(anomaly, scale))) - 6);
+  bits[0] = Math.max(anomaly, scale);
+  words[0] = 0;
+  words[1] = words[1]! & 0x7ff00000;
+  const quantum = bits[0]! / 64;
   return Math.round(anomaly / quantum) * quantum;
 }
 

@@ -28,3 +28,8 @@ export function anomalyTable(eccentricity: DoubleDouble): AnomalyTable {
   }
   return table;
 }
+
+/** Bytes of the tables kept at present. */
+export function tableBytes(): number {
+  return total;
+}

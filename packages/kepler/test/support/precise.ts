@@ -1,4 +1,4 @@
-import DecimalBase from "decimal.js";
+import { Decimal as DecimalBase } from "decimal.js";
 
 /** Arithmetic of 60 digits: the outside measure of every accuracy claim here. */
 export const Decimal: typeof DecimalBase = DecimalBase.clone({ precision: 60 });
@@ -14,6 +14,7 @@ export const Exact: typeof DecimalBase = DecimalBase.clone({ precision: 700 });
 
 /** The exact value of a double between 1e-100 and 1e100, for exact sums and products. */
 export function exactly(x: number): Precise {
+  if (!Number.isFinite(x)) throw new RangeError(`no exact value: ${x}`);
   let significand = x;
   let exponent = 0;
   while (!Number.isInteger(significand)) {
@@ -25,6 +26,7 @@ export function exactly(x: number): Precise {
 
 /** The exact value of a double (the library itself would read its shortest decimal form). */
 export function precise(x: number): Precise {
+  if (!Number.isFinite(x)) throw new RangeError(`no exact value: ${x}`);
   let significand = x;
   let exponent = 0;
   while (!Number.isInteger(significand)) {

@@ -9,11 +9,13 @@ import {
   fromNystrom,
   fromNystromPair,
   fromPair,
+  fromRadau,
   fromSplitting,
   fromSundman,
   fromTableau,
 } from "./build/stepper-of.ts";
 import { gaussLegendre } from "./methods/collocation/gauss-legendre.ts";
+import { gaussRadau15 } from "./methods/collocation/gauss-radau-15.ts";
 import { hermite4 } from "./methods/hermite/hermite-4.ts";
 import { hasEmbedded } from "./methods/method.ts";
 import { adamsBashforthMoulton } from "./methods/multistep/adams-bashforth-moulton.ts";
@@ -34,6 +36,7 @@ export const catalogue: readonly Stepper[] = [
   ...adamsBashforthMoulton.map(fromAdams),
   fromGaussJackson(gaussJackson8),
   ...extrapolations.flatMap(fromExtrapolation),
+  fromRadau(gaussRadau15),
   fromHermite(hermite4),
   fromLogarithmicLeapfrog(logarithmicLeapfrog),
   ...sundmans.map(fromSundman),

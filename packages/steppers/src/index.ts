@@ -6,6 +6,19 @@ export type { PairProgram } from "./build/pair.ts";
 export type { BuildStep, Setting } from "./build/step-program.ts";
 export { catalogue, findStepper } from "./catalogue.ts";
 export { InvalidInputError } from "./errors.ts";
+// Blocks of trajectories in vector lanes.
+export type { FunctionCode } from "./lanes/encoder.ts";
+export {
+  compileLanes,
+  LANES,
+  LaneCode,
+  type Operand,
+  PAIR_BYTES,
+  type Pointer,
+  ROW_BYTES,
+} from "./lanes/lane-code.ts";
+export { lanesAvailable, type StepKernel, stepKernel } from "./lanes/step-kernel.ts";
+export { type KernelFunction, type LaneMemory, laneMemory } from "./lanes/web-assembly.ts";
 export { ownStepper } from "./own-stepper.ts";
 export { countEvaluations, countFlops } from "./program/count.ts";
 export { emitJavaScript } from "./program/emit-javascript.ts";

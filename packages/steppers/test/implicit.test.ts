@@ -1,7 +1,15 @@
 import { describe, expect, it } from "vitest";
-import { buildCollocation, firstOrder, gaussRows } from "../src/build/collocation.ts";
+import {
+  buildCollocation,
+  type CollocationRows,
+  firstOrder,
+  gaussRows,
+  radauRows,
+} from "../src/build/collocation.ts";
 import { type CollocationProgram, catalogue, type ImplicitStepper } from "../src/index.ts";
 import { gaussLegendre } from "../src/methods/collocation/gauss-legendre.ts";
+import { gaussRadau15 } from "../src/methods/collocation/gauss-radau-15.ts";
+import type { Collocation } from "../src/methods/method.ts";
 import { arcs } from "./support/exact-arc.ts";
 import { fixed, size, times } from "./support/fixed-point.ts";
 import { evaluateExactly, force, type Pairs, pairs } from "./support/interpret-double-double.ts";
@@ -9,14 +17,19 @@ import { nystromResiduals } from "./support/nystrom-trees.ts";
 import { stateError } from "./support/observed-order.ts";
 import { energy, periapsis, stateAfter, stepper } from "./support/runs.ts";
 
-const implicits = catalogue.filter((found): found is ImplicitStepper => "collocation" in found);
-const methods = gaussLegendre.map((method) => [method.id, method] as const);
+const implicits = catalogue.filter(
+  (found): found is ImplicitStepper => "collocation" in found && found.knob === "step",
+);
+const gauss = gaussLegendre.map((method) => [method.id, method] as const);
+const all = [...gauss, [gaussRadau15.id, gaussRadau15] as const];
+const rowsOf = (method: Collocation): CollocationRows =>
+  method === gaussRadau15 ? radauRows(method) : gaussRows(method);
 /** Nodes are printed to 40 digits. */
 const printed = 1e-36;
 
-describe("Gauss collocation, from the nodes alone", () => {
-  it.each(methods)("%s: special Nystrom trees to its order and no further", (_, method) => {
-    const rows = gaussRows(method);
+describe("collocation, from the nodes alone", () => {
+  it.each(all)("%s: special Nystrom trees to its order and no further", (_, method) => {
+    const rows = rowsOf(method);
     const exact = {
       c: rows.c.map(fixed),
       a: rows.a.map((row) => row.map(fixed)),
@@ -27,7 +40,7 @@ describe("Gauss collocation, from the nodes alone", () => {
     expect(Math.max(...residuals.slice(0, -1))).toBeLessThan(printed);
     expect(residuals.at(-1)!).toBeGreaterThan(1e8 * printed);
   });
-  it.each(methods)("%s: symplectic, b_i a_ij + b_j a_ji = b_i b_j, and symmetric", (_, method) => {
+  it.each(gauss)("%s: symplectic, b_i a_ij + b_j a_ji = b_i b_j, and symmetric", (_, method) => {
     const { a, velocity } = firstOrder(method);
     const [A, b] = [a.map((row) => row.map(fixed)), velocity.map(fixed)];
     const last = b.length - 1;
@@ -42,7 +55,7 @@ describe("Gauss collocation, from the nodes alone", () => {
 });
 
 /** The implicit step in double-double arithmetic, iterated until it no longer changes. */
-function runImplicit(program: CollocationProgram, start: Pairs, steps: number): Pairs {
+function runImplicit(program: CollocationProgram, startsAtNode: boolean, start: Pairs, steps: number): Pairs {
   const h: [number, number] = [1 / steps, 0];
   if (Math.fround(h[0]) !== h[0]) throw new Error("steps must be a power of two here");
   const state = pairs(4);
@@ -58,6 +71,11 @@ function runImplicit(program: CollocationProgram, start: Pairs, steps: number): 
   for (let n = 0; n < steps; n += 1) {
     inputs.hi.set(state.hi);
     inputs.lo.set(state.lo);
+    if (startsAtNode) {
+      evaluateExactly(program.first, h, state, first);
+      inputs.hi.set(first.hi, 4);
+      inputs.lo.set(first.lo, 4);
+    }
     for (let sweep = 0; sweep < 100; sweep += 1) {
       evaluateExactly(program.sweep, h, inputs, swept);
       inputs.hi.set(swept.hi.subarray(0, nodes), 4);
@@ -74,12 +92,16 @@ function runImplicit(program: CollocationProgram, start: Pairs, steps: number): 
 }
 
 describe("observed order on a Kepler arc, in double-double arithmetic", () => {
-  it.each(methods)("%s", (_, method) => {
-    const program = buildCollocation(gaussRows(method), { dimension: 2, summation: "plain", force });
-    const coarse = method.order >= 10 ? 16 : method.order >= 6 ? 32 : 128;
+  it.each(all)("%s", (_, method) => {
+    const program = buildCollocation(rowsOf(method), { dimension: 2, summation: "plain", force });
+    const coarse = method.order === 15 ? 8 : method.order >= 10 ? 16 : method.order >= 6 ? 32 : 128;
     const [first, second] = [coarse, 2 * coarse].map((steps) =>
       Math.sqrt(
-        arcs.reduce((t, arc) => t + stateError(runImplicit(program, arc.start, steps), arc.end) ** 2, 0),
+        arcs.reduce(
+          (t, arc) =>
+            t + stateError(runImplicit(program, method === gaussRadau15, arc.start, steps), arc.end) ** 2,
+          0,
+        ),
       ),
     );
     const order = Math.log2(first! / second!);

@@ -1,9 +1,10 @@
 import { parseRow } from "../exact/coefficients.ts";
 import { evaluate, integral, lagrangeBasis } from "../exact/lagrange.ts";
-import { add, isZero, multiply, one, type Rational, sum } from "../exact/rational.ts";
+import { add, isZero, multiply, one, type Rational, sum, toDouble } from "../exact/rational.ts";
 import type { Collocation } from "../methods/method.ts";
 import { ProgramBuilder } from "../program/builder.ts";
 import type { Program, Value } from "../program/program.ts";
+import type { CollocationInDoubles } from "../run/radau.ts";
 import type { NystromRows } from "./nystrom.ts";
 import type { Setting } from "./step-program.ts";
 import { compensations, RunningState } from "./summation.ts";
@@ -37,6 +38,20 @@ export function radauRows(method: Collocation): CollocationRows {
     ...rows,
     a: rows.c.map((c) => twice.map((polynomial) => evaluate(polynomial, c))),
     position: twice.map((polynomial) => evaluate(polynomial, one)),
+  };
+}
+
+/** Nodes, basis polynomials and dense-output rows, rounded. */
+export function inDoubles(method: Collocation): CollocationInDoubles {
+  const nodes = parseRow(method.nodes);
+  const basis = lagrangeBasis(nodes);
+  const rounded = (rows: readonly (readonly Rational[])[]): number[][] =>
+    rows.map((row) => row.map(toDouble));
+  return {
+    nodes: nodes.map(toDouble),
+    basis: rounded(basis),
+    position: rounded(basis.map((polynomial) => integral(integral(polynomial)).slice(2))),
+    velocity: rounded(basis.map((polynomial) => integral(polynomial).slice(1))),
   };
 }
 
@@ -80,17 +95,19 @@ export function buildCollocation(
   const s = new ProgramBuilder(d, 2 * d + stages * d, force);
   const [q, v] = [s.vector(0), s.vector(d)];
   const old = rows.c.map((_, i) => s.vector(2 * d + i * d));
-  const fresh = rows.c.map((c, i) => {
+  // Each node uses what this sweep has already made: fewer sweeps, the same solution.
+  const newest = [...old];
+  rows.c.forEach((c, i) => {
     // A node at the start of the step has the acceleration of the state, which does not change.
-    if (isZero(c)) return old[i]!;
-    return s.acceleration(
+    if (isZero(c)) return;
+    newest[i] = s.acceleration(
       axes.map((k) => {
-        const pull = s.mul(s.step, s.weightedSum(rows.a[i]!, along(old, k))!);
+        const pull = s.mul(s.step, s.weightedSum(rows.a[i]!, along(newest, k))!);
         return s.add(q[k]!, s.mul(s.step, s.add(s.scale(c, v[k]!), pull)));
       }),
     );
   });
-  const changes = fresh.flatMap((acceleration, i) => acceleration.map((x, k) => s.sub(x, old[i]![k]!)));
+  const changes = newest.flatMap((acceleration, i) => acceleration.map((x, k) => s.sub(x, old[i]![k]!)));
 
   const extra = compensations(d, summation);
   const nodesAt = 2 * d + extra;
@@ -108,7 +125,7 @@ export function buildCollocation(
   return {
     stages,
     first: first.finish(first.acceleration(first.vector(0))),
-    sweep: s.finish([...fresh.flat(), size(s, changes), size(s, fresh.flat())]),
+    sweep: s.finish([...newest.flat(), size(s, changes), size(s, newest.flat())]),
     finish: f.finish([...state.outputs(), ...guesses, size(f, highest)]),
   };
 }

@@ -15,10 +15,11 @@ import type {
 } from "../methods/method.ts";
 import { type Dense, nystromInterpolant, rungeKuttaInterpolant } from "../run/dense.ts";
 import { fixedStep, type ProgramStepper } from "../run/fixed-step.ts";
-import { type ImplicitStepper, implicitStep } from "../run/implicit.ts";
+import { type ImplicitStepper, implicitStep, variableCollocation } from "../run/implicit.ts";
+import type { CollocationInDoubles } from "../run/radau.ts";
 import { type PairStepper, variableStep } from "../run/variable-step.ts";
 import { buildAdams } from "./adams.ts";
-import { buildCollocation, type CollocationRows, gaussRows } from "./collocation.ts";
+import { buildCollocation, type CollocationRows, gaussRows, inDoubles, radauRows } from "./collocation.ts";
 import { compose } from "./composition.ts";
 import { denseRows } from "./dense-rows.ts";
 import { buildDenseStages } from "./dense-stages.ts";
@@ -215,6 +216,24 @@ export function fromGauss(method: Collocation): ImplicitStepper {
     (setting) => {
       rows ??= gaussRows(method);
       return buildCollocation(rows, setting);
+    },
+  );
+}
+
+/** Everhart's collocation in variable step. */
+export function fromRadau(method: Collocation): ImplicitStepper {
+  const claims = { ...published(method), ...notGeometric, family: "collocation", explicit: false } as const;
+  let rows: CollocationRows | undefined;
+  let numbers: CollocationInDoubles | undefined;
+  return variableCollocation(
+    { ...claims, stages: () => parseRow(method.nodes).length },
+    (setting) => {
+      rows ??= radauRows(method);
+      return buildCollocation(rows, setting);
+    },
+    () => {
+      numbers ??= inDoubles(method);
+      return numbers;
     },
   );
 }

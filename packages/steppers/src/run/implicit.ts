@@ -7,6 +7,7 @@ import { pointMass, suppliedForce } from "../program/force.ts";
 import type { Start, Stepper, Trajectory } from "../stepper.ts";
 import { checkAdvance, dimensionOf, stepOf } from "./begin.ts";
 import type { Claims } from "./fixed-step.ts";
+import { type CollocationInDoubles, RadauRun } from "./radau.ts";
 import { iterate } from "./sweeps.ts";
 
 /** An implicit stepper of fixed h: straight-line parts around an iteration. */
@@ -14,7 +15,8 @@ export interface ImplicitStepper extends Stepper {
   collocation(setting: Setting): CollocationProgram;
 }
 
-interface Compiled {
+/** The parts of a collocation step, ready to run. */
+export interface CompiledCollocation {
   readonly program: CollocationProgram;
   readonly first: Executable;
   readonly sweep: Executable;
@@ -26,7 +28,7 @@ export function implicitStep(
   build: (setting: Setting) => CollocationProgram,
 ): ImplicitStepper {
   const { stages, ...info } = claims;
-  const compiled = new Map<string, Compiled>();
+  const compiled = new Map<string, CompiledCollocation>();
   return {
     ...info,
     knob: "step",
@@ -55,7 +57,41 @@ export function implicitStep(
   };
 }
 
-export function compileCollocation(program: CollocationProgram): Compiled {
+/** A variable-step stepper by collocation. */
+export function variableCollocation(
+  claims: Claims,
+  build: (setting: Setting) => CollocationProgram,
+  numbers: () => CollocationInDoubles,
+): ImplicitStepper {
+  const { stages, ...info } = claims;
+  const compiled = new Map<string, CompiledCollocation>();
+  return {
+    ...info,
+    knob: "tolerance",
+    uneven: true,
+    denseOutput: true,
+    selfStarting: true,
+    get stages() {
+      return stages();
+    },
+    evaluationsPerStep: null,
+    startEvaluations: null,
+    collocation: build,
+    begin(start: Start): Trajectory {
+      const dimension = dimensionOf(start);
+      const key = `${dimension} ${start.acceleration !== undefined}`;
+      let code = compiled.get(key);
+      if (code === undefined) {
+        const force = start.acceleration === undefined ? pointMass : suppliedForce;
+        code = compileCollocation(build({ dimension, summation: "plain", force }));
+        compiled.set(key, code);
+      }
+      return new RadauRun(start, code, numbers());
+    },
+  };
+}
+
+function compileCollocation(program: CollocationProgram): CompiledCollocation {
   return {
     program,
     first: compile(program.first),
@@ -68,7 +104,7 @@ class ImplicitRun implements Trajectory {
   evaluations = 0;
   readonly rejectedSteps = 0;
   readonly smallestStep: number;
-  readonly #code: Compiled;
+  readonly #code: CompiledCollocation;
   readonly #h: number;
   readonly #force: SuppliedForce;
   readonly #width: number;
@@ -80,7 +116,7 @@ class ImplicitRun implements Trajectory {
   readonly #sweepOutputs: Float64Array;
   readonly #finished: Float64Array;
 
-  constructor(code: Compiled, state: Float64Array, h: number, force: SuppliedForce) {
+  constructor(code: CompiledCollocation, state: Float64Array, h: number, force: SuppliedForce) {
     const { program } = code;
     this.#code = code;
     this.#h = h;

@@ -8,9 +8,10 @@ import { pointMass, suppliedForce } from "../program/force.ts";
 import type { Program } from "../program/program.ts";
 import type { Start, Stepper, Trajectory } from "../stepper.ts";
 import { checkAdvance, dimensionOf } from "./begin.ts";
-import { type Controller, makeController, power64 } from "./controller.ts";
+import { type Controller, makeController } from "./controller.ts";
 import type { Dense } from "./dense.ts";
 import { advanceTime, type Time, timeUntil } from "./double-double.ts";
+import { firstStep } from "./first-step.ts";
 import type { Claims } from "./fixed-step.ts";
 
 export type PairClaims = Omit<Claims, "uneven"> & { readonly embeddedOrder: number };
@@ -234,17 +235,4 @@ class VariableStepRun implements Trajectory {
 function allFinite(values: Float64Array, count: number): boolean {
   for (let k = 0; k < count; k += 1) if (!Number.isFinite(values[k])) return false;
   return true;
-}
-
-/** A first guess: the local dynamical time, the shorter of |q|/|v| and sqrt(|q|/|a|), times tolerance^(1/k); the control mends it. */
-function firstStep(state: Float64Array, d: number, tolerance: number, lowerOrder: number): number {
-  const size = (from: number): number => {
-    let largest = 0;
-    for (let k = from; k < from + d; k += 1) largest = Math.max(largest, Math.abs(state[k]!));
-    return largest;
-  };
-  const length = size(0);
-  const dynamicalTime = Math.min(length / size(d), Math.sqrt(length / size(2 * d)));
-  const guess = dynamicalTime * power64(tolerance, Math.round(64 / (lowerOrder + 1)));
-  return guess > 0 ? guess : Number.POSITIVE_INFINITY;
 }

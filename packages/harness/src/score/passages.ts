@@ -86,6 +86,14 @@ export class Passages {
     this.previousSide = side;
   }
 
+  /** A passage found elsewhere: states and time of the last step before it. */
+  passAfter(previous: Float64Array, previousExact: Float64Array, previousTime: number): void {
+    this.previous.set(previous);
+    this.previousExact.set(previousExact);
+    this.previousTime = previousTime;
+    this.pass();
+  }
+
   private walk(
     rows: Float64Array,
     exact: Float64Array,
@@ -138,7 +146,8 @@ export class Passages {
     const exactIndex = Math.round(
       (this.previousTime + this.reference.startMeanAnomaly + exactToPassage) / PERIOD,
     );
-    const timing = (toPassage - exactToPassage) / PERIOD + (this.next - exactIndex);
+    // Exact passages are one period apart: the one of equal number lies that many periods from the one found.
+    const timing = (toPassage - exactToPassage) / PERIOD + (exactIndex - this.next);
     if (!this.reference.circular && this.osculatingEccentricityStrays()) this.strayed = true;
     this.next += 1;
     this.count += 1;

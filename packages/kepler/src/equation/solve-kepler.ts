@@ -10,6 +10,8 @@ import { startAnomaly } from "./starter.ts";
 /** Nodes have 7 significant bits and lie in [2^-6, 3.25]. */
 const firstExponent = -6;
 const perOctave = 64;
+/** Below this anomaly the series of E - sin E serves instead of the nodes. */
+const smallest = 0.03125;
 const nodeCount = 7 * perOctave + 41;
 const bits: Float64Array = new Float64Array(1);
 const words: Uint32Array = new Uint32Array(bits.buffer);
@@ -33,10 +35,9 @@ function buildNodes(): void {
 function solveHalfTurn(e: number, mean: number, meanLow: number): number {
   const complement = 1 - e;
   const complementLow = 1 - complement - e;
-  if (mean < 0.03125 * complement + 5.08e-6 * e) {
-    return mean > 0 ? smallAnomaly(e, complement, complementLow, mean, meanLow) : mean;
-  }
-  bits[0] = startAnomaly(e, complement, mean);
+  const first = startAnomaly(e, complement, mean);
+  if (first < smallest) return smallAnomaly(e, complement, complementLow, mean, meanLow, first);
+  bits[0] = first;
   const at = 8 * (((words[1]! + 8192) >>> 14) - ((1023 + firstExponent) << 6));
   const anomaly = nodes[at]!;
   const eSin = e * nodes[at + 1]!;

@@ -20,18 +20,19 @@ export async function writeReport(
   const charts = describeCharts(evidence);
   const folder = join(directory, "charts");
   await mkdir(folder, { recursive: true });
+  const pictures: Promise<void>[] = [];
   const drawings = new Map<string, string>();
   for (const chart of charts) {
     drawings.set(chart.name, await drawSpec(compileSpec(drawingSpec(chart.spec)), chart.name));
-    await writeChart(folder, chart);
+    pictures.push(writeChart(folder, chart, await toSvg(chart)));
   }
   await writeFile(join(directory, "report.html"), renderPage(evidence, charts, drawings));
+  await Promise.all(pictures);
   for (const [name, content] of Object.entries(extraFiles)) await writeFile(join(directory, name), content);
 }
 
-async function writeChart(folder: string, chart: Chart): Promise<void> {
-  const svg = await toSvg(chart);
+async function writeChart(folder: string, chart: Chart, svg: string): Promise<void> {
   await writeFile(join(folder, `${chart.name}.vl.json`), `${JSON.stringify(chart.spec, null, 1)}\n`);
   await writeFile(join(folder, `${chart.name}.svg`), `${svg}\n`);
-  await writeFile(join(folder, `${chart.name}.png`), toPng(svg));
+  await writeFile(join(folder, `${chart.name}.png`), await toPng(svg));
 }

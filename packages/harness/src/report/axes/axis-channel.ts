@@ -23,7 +23,13 @@ export function axisChannel(
   readonly type: "quantitative";
   readonly scale: LogAxis["scale"] | LinearAxis["scale"];
   readonly title: string;
-  readonly axis: { grid: boolean; values?: number[]; labelExpr?: string; labelOverlap: boolean | "greedy" };
+  readonly axis: {
+    grid: boolean;
+    tickCount?: number;
+    values?: number[];
+    labelExpr?: string;
+    labelOverlap: boolean | "greedy";
+  };
 } {
   const { axis } = quantity;
   return {
@@ -33,7 +39,7 @@ export function axisChannel(
     title: quantity.title,
     axis:
       axis.values === undefined
-        ? { grid, labelOverlap: "greedy" }
+        ? { grid, tickCount: 8, labelOverlap: "greedy" }
         : { grid, values: axis.values, labelExpr: axis.labelExpr, labelOverlap: "greedy" },
   };
 }

@@ -12,7 +12,7 @@ const MOST_BARS = 24;
 export function costBars(evidence: ChoiceEvidence): Chart | null {
   const { choice } = evidence;
   const bars = choice.ranking.slice(0, MOST_BARS);
-  const first = bars[0];
+  const first = choice.ranking.find((ranked) => ranked.stepper === choice.choice) ?? bars[0];
   if (first === undefined) return null;
   const current = choice.current;
   const rows: Row[] = bars.map((ranked) =>
@@ -120,13 +120,13 @@ function rowOf(ranked: RankedStepper, first: RankedStepper, label: string, chose
 
 function titleOf(evidence: ChoiceEvidence, first: RankedStepper): string {
   const { choice } = evidence;
-  const second = choice.ranking[1];
-  const last = choice.ranking.at(-1);
+  const others = choice.ranking.filter((ranked) => ranked !== first);
+  const [second, last] = [others[0], others.at(-1)];
   const base = `${first.stepper} does the job with ${formatNumber(first.evaluationsTotal)} force evaluations`;
   if (second === undefined || last === undefined) return `${base}; no other stepper qualifies`;
   const times = (ranked: RankedStepper): string =>
     formatTimes(ranked.evaluationsTotal / first.evaluationsTotal);
-  return last === second
-    ? `${base}; ${second.stepper} takes ${times(second)} times as many`
-    : `${base}; ${second.stepper} takes ${times(second)} times as many, ${last.stepper} ${times(last)} times`;
+  const extrapolated = second.evidence === "extrapolated" ? " (extrapolated)" : "";
+  const next = `${base}; ${second.stepper} takes ${times(second)} times as many${extrapolated}`;
+  return last === second ? next : `${next}, ${last.stepper} ${times(last)} times`;
 }

@@ -81,19 +81,19 @@ export function errorAgainstCost(evidence: ChoiceEvidence, looks: Looks): Chart 
 
 function findingOf(evidence: ChoiceEvidence): string {
   const { choice } = evidence;
-  const [first, second] = choice.ranking;
+  const first = choice.ranking.find((ranked) => ranked.stepper === choice.choice) ?? choice.ranking[0];
+  const second = choice.ranking.find((ranked) => ranked !== first);
   if (choice.choice === null || first === undefined) {
     const best = nearest(evidence.costPoints);
     return best === undefined
       ? "No stepper could be measured against the limits"
       : `No stepper tried holds every limit as asked: ${best.stepper} comes nearest, at ${formatNumber(best.worstRatio)} of the limit`;
   }
-  const chosen = choice.ranking.find((ranked) => ranked.stepper === choice.choice) ?? first;
   const others =
-    second === undefined || second === chosen
+    second === undefined
       ? ""
-      : `, ${second.stepper} needs ${formatTimes(second.evaluationsTotal / chosen.evaluationsTotal)} times as many in all`;
-  return `${chosen.stepper} holds every limit with ${formatCount(chosen.evaluationsPerOrbit)} force evaluations per orbit${others}`;
+      : `, ${second.stepper} needs ${formatTimes(second.evaluationsTotal / first.evaluationsTotal)} times as many in all`;
+  return `${first.stepper} holds every limit with ${formatCount(first.evaluationsPerOrbit)} force evaluations per orbit${others}`;
 }
 
 /** Where each curve first comes below the limit, cheapest first. */

@@ -115,7 +115,7 @@ function lines(
       field: "label",
       type: "nominal" as const,
       scale: { domain: [...labels], range: colours },
-      legend: { columns: 1, symbolType: "stroke", symbolSize: 320 },
+      legend: { columns: 1, symbolType: "stroke", symbolSize: 320, symbolStrokeWidth: 2 },
     },
   };
   return [
@@ -128,7 +128,7 @@ function lines(
           field: "label",
           type: "nominal",
           scale: { domain: [...labels], range: histories.map((history) => [...DASH_OF_ROLE[history.role]]) },
-          legend: { columns: 1, symbolType: "stroke", symbolSize: 320 },
+          legend: { columns: 1, symbolType: "stroke", symbolSize: 320, symbolStrokeWidth: 2 },
         },
       },
     },

@@ -1,4 +1,4 @@
-import type { LimitErrors } from "../../choose/choice.ts";
+import type { LimitError, LimitErrors } from "../../choose/choice.ts";
 import { axisChannel, type Quantity } from "../axes/axis-channel.ts";
 import { logAxis } from "../axes/log-axis.ts";
 import type { Chart } from "../chart.ts";
@@ -31,7 +31,7 @@ export function margins(evidence: ChoiceEvidence): Chart | null {
       label: subject.label,
       stepper: subject.stepper,
       limit: limitWords(key),
-      factor: error.factor,
+      factor: factorOf(error),
       worst: limitValue(key, error.value),
       allowed: limitValue(key, error.limit),
       orbit: error.orbit,
@@ -44,6 +44,9 @@ export function margins(evidence: ChoiceEvidence): Chart | null {
     title: "limit over worst error (right of 1: the limit holds)",
     axis: logAxis([...factors, 1, designFactor], 0.15),
   };
+  // What a logarithm cannot show stands at the edge: no error at all on the right, a run that diverged on the left.
+  const [low, high] = x.axis.domain;
+  const placed = rows.map((row) => ({ ...row, factor: Math.min(Math.max(Number(row.factor), low), high) }));
   const limits = [...new Set(rows.map((row) => String(row.limit)))];
   const labels = subjects.map((subject) => subject.label);
   const y = {
@@ -93,7 +96,7 @@ export function margins(evidence: ChoiceEvidence): Chart | null {
     )}. ${subjects.map((subject) => `${subject.label}: ${factorsOf(subject)}`).join(". ")}.`,
     note: "",
     height: limits.length * 44,
-    rows,
+    rows: placed,
     layers: [
       ...line(1, "limit", [1, 0], "right"),
       ...(designFactor > 1 ? line(designFactor, `× ${formatNumber(designFactor)}`, [6, 4], "left") : []),
@@ -109,7 +112,7 @@ export function margins(evidence: ChoiceEvidence): Chart | null {
         encoding: {
           x: axisChannel(x, true),
           y,
-          yOffset: { field: "label", type: "nominal", scale: { domain: labels, paddingOuter: 1.5 } },
+          yOffset: { field: "label", type: "nominal", scale: { domain: labels, paddingOuter: 1 } },
           color: {
             field: "label",
             type: "nominal",
@@ -155,17 +158,31 @@ function subjectsOf(evidence: ChoiceEvidence): Subject[] {
 }
 
 function titleOf(evidence: ChoiceEvidence, subject: Subject): string {
-  const tightest = Object.entries(subject.errors).sort((a, b) => a[1].factor - b[1].factor)[0];
+  const tightest = Object.entries(subject.errors).sort((a, b) => factorOf(a[1]) - factorOf(b[1]))[0];
   if (tightest === undefined) return `No limit was measured for ${subject.stepper}`;
   const [key, error] = tightest;
   const who = subject.stepper === evidence.choice.choice ? subject.stepper : subject.label;
-  return error.factor >= 1
-    ? `The limit on ${limitWords(key)} binds ${who}: its worst error stays ${formatTimes(error.factor)} times below`
-    : `${who} breaks the limit on ${limitWords(key)} ${formatTimes(1 / error.factor)} times over`;
+  const limit = limitWords(key);
+  if (factorOf(error) >= 1) {
+    return `The limit on ${limit} binds ${who}: its worst error stays ${formatTimes(error.factor)} times below`;
+  }
+  return error.factor > 0
+    ? `${who} breaks the limit on ${limit} ${formatTimes(1 / error.factor)} times over`
+    : `${who} breaks the limit on ${limit}: it does not stay in orbit, or the error is not defined`;
+}
+
+/** Limit over error; beyond every number where there is no error. */
+function factorOf(error: LimitError): number {
+  return error.value === 0 ? Number.POSITIVE_INFINITY : error.factor;
+}
+
+function factorWords(error: LimitError): string {
+  if (error.value === 0) return "without error";
+  return error.value === null ? "diverged or not defined" : formatNumber(error.factor);
 }
 
 function factorsOf(subject: Subject): string {
   return Object.entries(subject.errors)
-    .map(([key, error]) => `${limitWords(key)} ${formatNumber(error.factor)}`)
+    .map(([key, error]) => `${limitWords(key)} ${factorWords(error)}`)
     .join("; ");
 }

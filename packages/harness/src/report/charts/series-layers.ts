@@ -31,6 +31,8 @@ export function seriesLayers(
   const scales = lookScales(looks.highlighted);
   const shown = { field: "stepper", oneOf: scales.domain };
   const drawable = `isValid(datum[${JSON.stringify(y.field)}]) && datum[${JSON.stringify(y.field)}] > 0 && datum.ended !== 'diverged'`;
+  // Grey lines end at their last mark inside: cutting each at the edge would take the picture a second.
+  const inside = clip ? `${within(x)} && ${within(y)}` : "true";
   const position = { x: axisChannel(x), y: axisChannel(y, true) };
   const tooltip = tips.map((tip) =>
     tip.format === undefined
@@ -43,6 +45,7 @@ export function seriesLayers(
     scale: { domain: scales.domain, range: scales.colours },
   };
   const fading = { condition: { param: "picked", value: 1 }, value: FADED };
+  // Opacity of strokes and fills, not of whole marks: that would cost the picture a layer for each of thousands.
   const mutedFading = {
     condition: [
       { param: "picked", empty: false, value: 1 },
@@ -58,21 +61,21 @@ export function seriesLayers(
   if (looks.muted.length > 0) {
     layers.push(
       {
-        transform: [{ filter: { not: shown } }, { filter: drawable }],
-        mark: { type: "line", strokeWidth: 1, clip },
+        transform: [{ filter: { not: shown } }, { filter: drawable }, { filter: inside }],
+        mark: { type: "line", strokeWidth: 1 },
         encoding: {
           ...position,
           detail: { field: "stepper", type: "nominal" },
           color: mutedColour,
-          opacity: mutedFading,
+          strokeOpacity: mutedFading,
           strokeDash: { condition: { test: "datum.symplectic", value: [1, 0] }, value: [3, 3] },
         },
       },
       {
-        transform: [{ filter: { not: shown } }, { filter: drawable }],
+        transform: [{ filter: { not: shown } }, { filter: drawable }, { filter: inside }],
         name: MUTED_MARKS,
-        mark: { type: "circle", size: 10, clip },
-        encoding: { ...position, color: mutedColour, opacity: mutedFading, tooltip },
+        mark: { type: "circle", size: 10, opacity: 1 },
+        encoding: { ...position, color: mutedColour, fillOpacity: mutedFading, tooltip },
       },
     );
   }
@@ -88,7 +91,6 @@ export function seriesLayers(
           field: "stepper",
           type: "nominal",
           scale: { domain: scales.domain, range: scales.dashes },
-          legend: null,
         },
       },
     },
@@ -121,4 +123,8 @@ export function seriesLayers(
     },
   );
   return layers;
+}
+
+function within({ field, axis }: Quantity): string {
+  return `inrange(datum[${JSON.stringify(field)}], [${axis.domain.join(", ")}])`;
 }

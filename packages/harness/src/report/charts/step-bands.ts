@@ -63,7 +63,7 @@ export function stepBands(evidence: ChoiceEvidence): Chart | null {
       },
       {
         transform: [{ filter: "isValid(datum.cliff)" }],
-        mark: { type: "tick", thickness: 2.5, size: 17, color: colour("limit") },
+        mark: { type: "tick", thickness: 2.5, size: 17, color: colour("limit"), opacity: 1 },
         encoding: { y, x: plainX("cliff"), tooltip },
       },
       {

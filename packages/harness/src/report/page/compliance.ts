@@ -28,8 +28,8 @@ function limitRows(errors: LimitErrors, designFactor: number): Markup[][] {
     html`${limitWords(key)}`,
     html`${limitValue(key, error.limit)}`,
     html`${error.value === null ? "diverged or not defined" : limitValue(key, error.value)}`,
-    factorCell(error.factor),
-    gauge(error.factor, designFactor),
+    factorCell(error.value === 0 ? Number.POSITIVE_INFINITY : error.factor),
+    gauge(error.value === 0 ? Number.POSITIVE_INFINITY : error.factor, designFactor),
     html`${worstCellWords(error)}<br>${commandCode(error.command)}`,
   ]);
 }

@@ -23,7 +23,7 @@ function marginWords(current: CurrentChoice): string {
     return `holds every limit ${formatTimes(current.margin)} times over; the limit${limit} binds`;
   return current.margin > 0
     ? `exceeds the limit${limit} ${formatTimes(1 / current.margin)} times`
-    : `does not stay in orbit or leaves the limit${limit} undefined`;
+    : `does not stay in orbit, or its error${limit} is not defined`;
 }
 
 function costWords(choice: Choice, current: CurrentChoice): string {

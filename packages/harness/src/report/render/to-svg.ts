@@ -47,9 +47,9 @@ export async function drawSpec(spec: Spec, name: string): Promise<string> {
   const view = new View(parse(spec), { renderer: "none" });
   const svg = await view.toSVG();
   view.finalize();
-  // A hundredth of a pixel is not seen; digits beyond differ between engines and make a third of the file.
-  const rounded = svg.replace(/-?\d+\.\d{3,}(?:e-?\d+)?/g, (number) =>
-    String(Number(Number(number).toFixed(2))),
+  // A hundredth of a pixel is not seen; digits beyond differ between engines and make a third of the file. Only inside tags: text stays.
+  const rounded = svg.replace(/<[^>]+>/g, (tag) =>
+    tag.replace(/-?\d+\.\d{3,}(?:e-?\d+)?/g, (number) => String(Number(Number(number).toFixed(2)))),
   );
   return rounded.replace(/(\bid="|url\(#)(?=[a-z]+_?\d)/g, `$1${name}-`);
 }

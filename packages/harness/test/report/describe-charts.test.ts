@@ -1,0 +1,156 @@
+import { describe, expect, it } from "vitest";
+import type { Chart } from "../../src/report/chart.ts";
+import { describeCharts } from "../../src/report/describe-charts.ts";
+import type { ChoiceEvidence } from "../../src/report/evidence.ts";
+import { chooseLooks } from "../../src/report/look/stepper-look.ts";
+import { compileSpec, toSvg } from "../../src/report/render/to-svg.ts";
+import { formatCount, formatNumber } from "../../src/report/text/number.ts";
+import { inventedEvidence } from "./invented-evidence.ts";
+
+const NAMES = [
+  "error-against-cost",
+  "cost-to-hold-the-limits",
+  "margins",
+  "step-bands",
+  "energy-over-time",
+  "phase-over-time",
+  "along-track-over-time",
+  "phase-against-eccentricity",
+  "energy-against-eccentricity",
+  "period-against-eccentricity",
+  "phase-against-steps",
+  "energy-against-steps",
+  "period-against-steps",
+  "orbit-in-the-plane",
+];
+
+function chart(evidence: ChoiceEvidence, name: string): Chart {
+  const found = describeCharts(evidence).find((candidate) => candidate.name === name);
+  if (found === undefined) throw new Error(`no chart ${name}`);
+  return found;
+}
+
+describe("charts of a choice", () => {
+  it.each([7, 60, 73])("are all there for %i steppers, and compile without a warning", (steppers) => {
+    const charts = describeCharts(inventedEvidence({ steppers }));
+    expect(charts.map(({ name }) => name)).toEqual(NAMES);
+    for (const { spec } of charts) expect(compileSpec(spec).marks?.length).toBeGreaterThan(0);
+  });
+
+  it("leave out what there is no data for when nothing qualifies", () => {
+    const names = describeCharts(inventedEvidence({ qualifies: false })).map(({ name }) => name);
+    expect(names).not.toContain("cost-to-hold-the-limits");
+    expect(names).not.toContain("step-bands");
+    expect(names).toContain("error-against-cost");
+  });
+
+  it("survive evidence without points", () => {
+    const evidence = inventedEvidence();
+    const bare: ChoiceEvidence = {
+      ...evidence,
+      choice: { ...evidence.choice, choice: null, ranking: [], current: null },
+      costPoints: [],
+      survey: { ...evidence.survey, againstEccentricity: [], againstStep: [] },
+      histories: [],
+      track: { ...evidence.track, exact: [], numerical: [] },
+    };
+    expect(describeCharts(bare)).toEqual([]);
+  });
+
+  it("give the same bytes for the same evidence, in whatever order they are drawn", async () => {
+    const [first, second] = [describeCharts(inventedEvidence()), describeCharts(inventedEvidence())];
+    expect(JSON.stringify(second)).toBe(JSON.stringify(first));
+    const forward = [];
+    for (const one of first) forward.push(await toSvg(one));
+    const backward = [];
+    for (const one of [...second].reverse()) backward.unshift(await toSvg(one));
+    expect(backward).toEqual(forward);
+  });
+});
+
+describe("titles follow the data", () => {
+  it("cost: the choice's own evaluations, and the runner-up's ratio", () => {
+    const evidence = inventedEvidence();
+    const [first, second] = evidence.choice.ranking;
+    const { title } = chart(evidence, "error-against-cost");
+    expect(title).toContain(first!.stepper);
+    expect(title).toContain(formatCount(first!.evaluationsPerOrbit));
+    expect(title).toContain(second!.stepper);
+    expect(title).toContain(formatNumber(second!.evaluationsTotal / first!.evaluationsTotal, 2));
+  });
+
+  it("cost: the choice by its id, though an extrapolated stepper comes before it", () => {
+    const evidence = inventedEvidence();
+    const [first, second, ...rest] = evidence.choice.ranking;
+    const ranking = [{ ...first!, evidence: "extrapolated" as const }, second!, ...rest];
+    const changed = { ...evidence, choice: { ...evidence.choice, ranking, choice: second!.stepper } };
+    expect(chart(changed, "error-against-cost").title).toMatch(
+      new RegExp(`^${second!.stepper} holds every limit with `),
+    );
+    expect(chart(changed, "cost-to-hold-the-limits").title).toMatch(new RegExp(`^${second!.stepper} `));
+  });
+
+  it("margins: the tightest limit of the choice and its factor", () => {
+    const evidence = inventedEvidence();
+    const tightest = Object.values(evidence.choice.ranking[0]!.errors).sort(
+      (a, b) => a.factor - b.factor,
+    )[0]!;
+    const { title } = chart(evidence, "margins");
+    expect(title).toContain("time of periapsis passage");
+    expect(title).toContain(formatNumber(tightest.factor, 2));
+  });
+
+  it("steps: doubling them divides a pure power law of order 5 by 32", () => {
+    expect(chart(inventedEvidence(), "phase-against-steps").title).toContain("by 32 (median)");
+  });
+
+  it("duration: the day the track leaves its limit", () => {
+    const evidence = inventedEvidence();
+    const today = evidence.histories.find(({ role }) => role === "current")!;
+    const day = today.points.find(({ alongTrackKm }) => alongTrackKm > 2)!.days;
+    expect(chart(evidence, "along-track-over-time").title).toContain(
+      `${today.stepper} passes the limit by day ${formatNumber(day, 2)}`,
+    );
+  });
+
+  it("nothing qualifies: says so and names the nearest", () => {
+    const { title } = chart(inventedEvidence({ qualifies: false }), "error-against-cost");
+    expect(title).toMatch(/^No stepper tried holds every limit/);
+  });
+
+  it("every chart has words of its own for those who cannot see it", () => {
+    const charts = describeCharts(inventedEvidence());
+    expect(new Set(charts.map(({ title }) => title)).size).toBe(charts.length);
+    for (const { description, title } of charts) {
+      expect(description.length).toBeGreaterThan(80);
+      expect(`${title} ${description}`).not.toMatch(/undefined|NaN|null|Infinity/);
+    }
+  });
+});
+
+describe("looks", () => {
+  it("highlight the choice first, then today's, at most eight in all", () => {
+    const evidence = inventedEvidence({ steppers: 60 });
+    const { highlighted, muted } = chooseLooks(evidence);
+    expect(highlighted.map(({ stepper }) => stepper).slice(0, 2)).toEqual([evidence.choice.choice, "rk4"]);
+    expect(highlighted).toHaveLength(8);
+    expect(highlighted.length + muted.length).toBe(60);
+    expect(new Set(highlighted.map(({ shape }) => shape)).size).toBe(8);
+    expect(new Set(highlighted.map(({ dash }) => dash.join())).size).toBe(8);
+  });
+});
+
+describe("drawings", () => {
+  it("carry their finding and text alternative, and no long digits", async () => {
+    const one = chart(inventedEvidence(), "margins");
+    const svg = await toSvg(one);
+    expect(svg).toContain(`<title>${one.title}</title>`);
+    expect(svg).toContain('role="img"');
+    expect(svg).not.toMatch(/(?:d|transform)="[^"]*\.\d{3}/);
+  });
+
+  it("label logarithmic axes as they are, rounding no text", async () => {
+    const svg = await toSvg(chart(inventedEvidence({ steppers: 60 }), "error-against-cost"));
+    expect(svg).toContain(">0.001<");
+  });
+});

@@ -10,10 +10,14 @@ export interface Found {
   /** The best ratio met where none holds, and where. */
   readonly nearest: Reading;
   readonly nearestFineness: number;
+  /** Refining stopped helping before the limits were met: the rounding floor. */
+  readonly stalled: boolean;
 }
 
 const WORST_COUNT = 3;
 const MOST_APPROACHES = 14;
+/** So many refinements in a row that gain less than a third of the method's order: the rounding floor. */
+const MOST_STALLS = 2;
 
 /**
  * Full-length search with the worst three samples. The neighbourhood is found by secant on log(error / limit); the answer is not: from
@@ -32,17 +36,17 @@ export async function search(context: ChoiceContext, candidate: Candidate, estim
   let reading = worst(refined);
   let nearest = reading;
   let nearestFineness = fineness;
-  let rises = 0;
+  let stalls = 0;
   for (let i = 0; reading.ratio * designFactor > 1; i++) {
     const power = Math.max(1, candidate.stepper.order);
     const factor = Number.isFinite(reading.ratio) ? (reading.ratio * designFactor) ** (1 / power) * 1.02 : 2;
     const next = knob.move(fineness, Math.min(3, Math.max(knob.notch, factor)));
-    if (next === fineness || i >= MOST_APPROACHES || rises >= 3) {
-      return { fineness: null, worstSamples: hard, nearest, nearestFineness };
+    if (next === fineness || i >= MOST_APPROACHES || stalls >= MOST_STALLS) {
+      return { fineness: null, worstSamples: hard, nearest, nearestFineness, stalled: stalls >= MOST_STALLS };
     }
     const after = await ratioAt(next);
-    // At the rounding floor finer is worse; three rises in a row end the attempt.
-    rises = after.ratio > reading.ratio ? rises + 1 : 0;
+    const expected = (next / fineness) ** (power / 3);
+    stalls = knob.kind === "step" && after.ratio * expected > reading.ratio ? stalls + 1 : 0;
     fineness = next;
     reading = after;
     if (after.ratio < nearest.ratio) {
@@ -62,7 +66,7 @@ export async function search(context: ChoiceContext, candidate: Candidate, estim
     if (next === at) break;
     at = next;
   }
-  return { fineness: last ?? passing, worstSamples: hard, nearest, nearestFineness };
+  return { fineness: last ?? passing, worstSamples: hard, nearest, nearestFineness, stalled: false };
 }
 
 /** The cliff: coarsest fineness, beyond the recommended one, at which every limit itself still holds on the worst samples. */

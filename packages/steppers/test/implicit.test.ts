@@ -41,8 +41,8 @@ describe("collocation, from the nodes alone", () => {
     expect(residuals.at(-1)!).toBeGreaterThan(1e8 * printed);
   });
   it.each(gauss)("%s: symplectic, b_i a_ij + b_j a_ji = b_i b_j, and symmetric", (_, method) => {
-    const { a, velocity } = firstOrder(method);
-    const [A, b] = [a.map((row) => row.map(fixed)), velocity.map(fixed)];
+    const { a, b: weights } = firstOrder(method);
+    const [A, b] = [a.map((row) => row.map(fixed)), weights.map(fixed)];
     const last = b.length - 1;
     for (let i = 0; i <= last; i += 1) {
       for (let j = 0; j <= last; j += 1) {

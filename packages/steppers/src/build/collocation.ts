@@ -1,6 +1,16 @@
 import { parseRow } from "../exact/coefficients.ts";
-import { evaluate, integral, lagrangeBasis } from "../exact/lagrange.ts";
-import { add, isZero, multiply, one, type Rational, sum, toDouble } from "../exact/rational.ts";
+import {
+  evaluate,
+  fromScaled,
+  integral,
+  lagrangeBasis,
+  type Scaled,
+  type ScaledPolynomial,
+  scaledOne,
+  scaledProduct,
+  toScaled,
+} from "../exact/lagrange.ts";
+import { isZero, type Rational, toDouble } from "../exact/rational.ts";
 import type { Collocation } from "../methods/method.ts";
 import { ProgramBuilder } from "../program/builder.ts";
 import type { Program, Value } from "../program/program.ts";
@@ -19,54 +29,55 @@ export interface CollocationRows extends NystromRows {
 
 /** Gauss: q' = v, v' = a(q) collocated as one system, so stage positions use the square of the first-order matrix. */
 export function gaussRows(method: Collocation): CollocationRows {
-  const rows = firstOrder(method);
-  const { c, a, velocity } = rows;
-  const times = (left: readonly Rational[], k: number): Rational =>
-    sum(left.map((x, j) => multiply(x, a[j]![k]!)));
-  return {
-    ...rows,
-    a: a.map((row) => c.map((_, k) => times(row, k))),
-    position: c.map((_, k) => times(velocity, k)),
-  };
+  const { matrix, weights, ...rest } = integrals(method);
+  const through = (row: readonly Scaled[]): Rational[] =>
+    row.map((_, k) => fromScaled(row.reduce((total, x, j) => total + scaledProduct(x, matrix[j]![k]!), 0n)));
+  return { ...rest, velocity: weights.map(fromScaled), a: matrix.map(through), position: through(weights) };
 }
 
 /** Everhart: the polynomial of the acceleration integrated once for the velocity and twice for the position. */
 export function radauRows(method: Collocation): CollocationRows {
-  const rows = firstOrder(method);
-  const twice = lagrangeBasis(rows.c).map((basis) => integral(integral(basis)));
+  const { nodes, basis, weights, ...rest } = integrals(method);
+  const twice = basis.map((polynomial) => integral(integral(polynomial)));
+  const at = (x: Scaled): Rational[] => twice.map((polynomial) => fromScaled(evaluate(polynomial, x)));
+  return { ...rest, velocity: weights.map(fromScaled), a: nodes.map(at), position: at(scaledOne) };
+}
+
+/** The first-order matrix and weights, exactly as far as the nodes are. */
+export function firstOrder(method: Collocation): {
+  a: readonly (readonly Rational[])[];
+  b: readonly Rational[];
+} {
+  const { matrix, weights } = integrals(method);
+  return { a: matrix.map((row) => row.map(fromScaled)), b: weights.map(fromScaled) };
+}
+
+function integrals(method: Collocation) {
+  const c = parseRow(method.nodes);
+  const nodes = c.map(toScaled);
+  const basis = lagrangeBasis(nodes);
+  const once = basis.map(integral);
   return {
-    ...rows,
-    a: rows.c.map((c) => twice.map((polynomial) => evaluate(polynomial, c))),
-    position: twice.map((polynomial) => evaluate(polynomial, one)),
+    c,
+    nodes,
+    basis,
+    matrix: nodes.map((node) => once.map((polynomial) => evaluate(polynomial, node))),
+    weights: once.map((polynomial) => evaluate(polynomial, scaledOne)),
+    ahead: nodes.map((node) => basis.map((polynomial) => fromScaled(evaluate(polynomial, scaledOne + node)))),
+    highest: basis.map((polynomial) => fromScaled(polynomial.at(-1)!)),
   };
 }
 
 /** Nodes, basis polynomials and dense-output rows, rounded. */
 export function inDoubles(method: Collocation): CollocationInDoubles {
-  const nodes = parseRow(method.nodes);
-  const basis = lagrangeBasis(nodes);
-  const rounded = (rows: readonly (readonly Rational[])[]): number[][] =>
-    rows.map((row) => row.map(toDouble));
+  const { c, basis } = integrals(method);
+  const rounded = (rows: readonly ScaledPolynomial[]): number[][] =>
+    rows.map((row) => row.map((x) => toDouble(fromScaled(x))));
   return {
-    nodes: nodes.map(toDouble),
+    nodes: c.map(toDouble),
     basis: rounded(basis),
     position: rounded(basis.map((polynomial) => integral(integral(polynomial)).slice(2))),
     velocity: rounded(basis.map((polynomial) => integral(polynomial).slice(1))),
-  };
-}
-
-/** The first-order matrix and weights; `position` is filled in by the two kinds. */
-export function firstOrder(method: Collocation): CollocationRows {
-  const c = parseRow(method.nodes);
-  const basis = lagrangeBasis(c);
-  const once = basis.map(integral);
-  return {
-    c,
-    a: c.map((node) => once.map((polynomial) => evaluate(polynomial, node))),
-    position: [],
-    velocity: once.map((polynomial) => evaluate(polynomial, one)),
-    ahead: c.map((node) => basis.map((polynomial) => evaluate(polynomial, add(one, node)))),
-    highest: basis.map((polynomial) => polynomial.at(-1)!),
   };
 }
 

@@ -15,13 +15,21 @@ export interface NystromRows {
 }
 
 export function nystromRows(method: NystromTableau): NystromRows {
-  return {
-    c: parseRow(method.c),
-    a: method.a.map(parseRow),
-    position: parseRow(method.position),
-    velocity: parseRow(method.velocity),
-  };
+  let rows = parsed.get(method);
+  if (rows === undefined) {
+    rows = {
+      c: parseRow(method.c),
+      a: method.a.map(parseRow),
+      position: parseRow(method.position),
+      velocity: parseRow(method.velocity),
+    };
+    parsed.set(method, rows);
+  }
+  return rows;
 }
+
+/** A start-up writes many steps of one method: its long fractions are read once. */
+const parsed = new WeakMap<NystromTableau, NystromRows>();
 
 /** True where the last stage stands at the new position, so that its acceleration is the next step's first. */
 export function nystromLastIsFirst({ c, a, position }: NystromRows): boolean {

@@ -66,6 +66,14 @@ export function toDouble(a: Rational): number {
 
 /** `a` as an unevaluated sum of two doubles; relative error below 2^-105. */
 export function toDoubleDouble(a: Rational): readonly [hi: number, lo: number] {
-  const hi = toDouble(a);
-  return [hi, toDouble(subtract(a, fromDouble(hi)))];
+  let pair = pairs.get(a);
+  if (pair === undefined) {
+    const hi = toDouble(a);
+    pair = [hi, toDouble(subtract(a, fromDouble(hi)))];
+    pairs.set(a, pair);
+  }
+  return pair;
 }
+
+/** A coefficient is rounded once however many programs use it. */
+const pairs = new WeakMap<Rational, readonly [hi: number, lo: number]>();

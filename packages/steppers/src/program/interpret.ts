@@ -1,5 +1,5 @@
 import type { Executable, SuppliedForce } from "./executable.ts";
-import type { Program } from "./program.ts";
+import type { Operation, Program } from "./program.ts";
 
 /** Runs a program one operation at a time: slow and obvious, the oracle for every emitter and the fallback where none may run. */
 export function interpret(program: Program): Executable {
@@ -39,59 +39,55 @@ function runOnce(
   const d = program.dimension;
   // Results of calls, by the operation that called: a later call overwrites them.
   const results = new Map<number, Float64Array>();
-  program.operations.forEach((operation, id) => {
-    const { args } = operation;
-    const [a, b, c] = [values[args[0] ?? 0]!, values[args[1] ?? 0]!, values[args[2] ?? 0]!];
-    switch (operation.kind) {
-      case "step":
-        values[id] = step;
-        break;
-      case "variable":
-        values[id] = inputs[operation.index]!;
-        break;
-      case "constant":
-        values[id] = operation.value;
-        break;
-      case "add":
-        values[id] = a + b;
-        break;
-      case "sub":
-        values[id] = a - b;
-        break;
-      case "mul":
-        values[id] = a * b;
-        break;
-      case "div":
-        values[id] = a / b;
-        break;
-      case "max":
-        values[id] = Math.max(a, b);
-        break;
-      case "less-equal":
-        values[id] = a <= b ? 1 : 0;
-        break;
-      case "select":
-        values[id] = a !== 0 ? b : c;
-        break;
-      case "sqrt":
-        values[id] = Math.sqrt(a);
-        break;
-      case "abs":
-        values[id] = Math.abs(a);
-        break;
-      case "acceleration":
-      case "jerk":
-        args.forEach((arg, k) => {
-          if (k < d) position[k] = values[arg]!;
-          else velocity[k - d] = values[arg]!;
-        });
-        if (operation.kind === "acceleration") force.acceleration(position, result);
-        else force.jerk(position, velocity, result);
-        results.set(id, result.slice());
-        break;
-      case "component":
-        values[id] = results.get(args[0]!)![operation.index]!;
-        break;
-    }
-  });
+  const { operations } = program;
+  for (let id = 0; id < operations.length; id += 1) {
+    const operation = operations[id]!;
+    if (operation.kind === "acceleration" || operation.kind === "jerk") {
+      operation.args.forEach((arg, k) => {
+        if (k < d) position[k] = values[arg]!;
+        else velocity[k - d] = values[arg]!;
+      });
+      if (operation.kind === "acceleration") force.acceleration(position, result);
+      else force.jerk(position, velocity, result);
+      results.set(id, result.slice());
+    } else if (operation.kind === "component") {
+      values[id] = results.get(operation.args[0])![operation.index]!;
+    } else values[id] = apply(operation, values, step, inputs);
+  }
+}
+
+function apply(operation: Operation, values: Float64Array, step: number, inputs: Float64Array): number {
+  const { args } = operation;
+  const a = values[args[0]!]!;
+  const b = values[args[1]!]!;
+  switch (operation.kind) {
+    case "step":
+      return step;
+    case "variable":
+      return inputs[operation.index]!;
+    case "constant":
+      return operation.value;
+    case "add":
+      return a + b;
+    case "sub":
+      return a - b;
+    case "mul":
+      return a * b;
+    case "div":
+      return a / b;
+    case "max":
+      // Compare and select, as every emitter does it: Math.max treats NaN and signed zeros otherwise.
+      if (a > b) return a;
+      return b;
+    case "less-equal":
+      return a <= b ? 1 : 0;
+    case "select":
+      return a !== 0 ? b : values[args[2]!]!;
+    case "sqrt":
+      return Math.sqrt(a);
+    case "abs":
+      return Math.abs(a);
+    default:
+      throw new TypeError(`${operation.kind} is a call`);
+  }
 }

@@ -87,7 +87,7 @@ const countBoth = ({ start, step }: StepProgram): readonly [start: number, step:
 
 function compileStep(program: StepProgram): Compiled {
   const [startEvaluations, stepEvaluations] = countBoth(program);
-  // A start is run once a trajectory and can be long: interpreting it costs less than compiling it.
+  // A start is run once a trajectory and can be very long: compiling it would cost more than it saves.
   return {
     step: compile(program.step),
     start: interpret(program.start),

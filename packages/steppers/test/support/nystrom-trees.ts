@@ -57,7 +57,7 @@ export function nystromResiduals(method: NystromFixed, order: number, theta: Fix
   const weightsOf = (tree: Tree): Fixed[] => {
     let found = weights.get(tree);
     if (found === undefined) {
-      const inner = tree.accelerations.map((child) => method.a.map((row) => dot(row, weightsOf(child))));
+      const inner = tree.accelerations.map(sumsOf);
       found = method.c.map((c, i) => {
         let value = whole(1);
         for (let k = 0; k < tree.velocities; k += 1) value = times(value, c);
@@ -67,6 +67,15 @@ export function nystromResiduals(method: NystromFixed, order: number, theta: Fix
     }
     return found;
   };
+  const sums = new Map<Tree, Fixed[]>();
+  function sumsOf(tree: Tree): Fixed[] {
+    let found = sums.get(tree);
+    if (found === undefined) {
+      found = method.a.map((row) => dot(row, weightsOf(tree)));
+      sums.set(tree, found);
+    }
+    return found;
+  }
   const residuals = [0];
   let power = whole(1);
   for (let n = 1; n <= order; n += 1) {

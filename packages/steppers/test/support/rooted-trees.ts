@@ -48,7 +48,7 @@ export function rungeKuttaResiduals(
   const weightsOf = (tree: Tree): Fixed[] => {
     let found = weights.get(tree);
     if (found === undefined) {
-      const inner = tree.children.map((child) => a.map((row) => dot(row, weightsOf(child))));
+      const inner = tree.children.map(sumsOf);
       found = Array.from({ length: stages }, (_, i) =>
         inner.reduce((p, sums) => times(p, sums[i]!), whole(1)),
       );
@@ -56,6 +56,15 @@ export function rungeKuttaResiduals(
     }
     return found;
   };
+  const sums = new Map<Tree, Fixed[]>();
+  function sumsOf(tree: Tree): Fixed[] {
+    let found = sums.get(tree);
+    if (found === undefined) {
+      found = a.map((row) => dot(row, weightsOf(tree)));
+      sums.set(tree, found);
+    }
+    return found;
+  }
   const residuals = [0];
   let power = whole(1);
   for (let n = 1; n <= order; n += 1) {

@@ -1,1 +1,35 @@
-export {};
+// Scenarios
+
+// Choosing
+export { type Choice, LIMIT_KEYS, type LimitKey, type RankedStepper } from "./choose/choice.ts";
+export { type ChooseOptions, chooseStepper } from "./choose/choose-stepper.ts";
+// Command line
+export { buildProgram } from "./cli/program.ts";
+export { EXIT, runCommandLine } from "./cli/run-command-line.ts";
+// Cells and scores
+export { InvalidInputError } from "./errors.ts";
+// Report
+export { describeCharts } from "./report/describe-charts.ts";
+export type { ChoiceEvidence } from "./report/evidence.ts";
+export { writeReport } from "./report/write-report.ts";
+export { CellPool, type PoolOptions, type PoolPlan } from "./run/cell-pool.ts";
+export { type ExactOrbitKind, type ExactState, exactAtPeriods, exactAtSteps } from "./run/exact-states.ts";
+export { runCell } from "./run/run-cell.ts";
+export { parseScenario, readScenario } from "./scenario/parse-scenario.ts";
+export type {
+  NumberOrRange,
+  Requirements,
+  Scenario,
+  ScenarioLimit,
+  ScenarioOrbit,
+} from "./scenario/scenario.ts";
+export { scenarioJsonSchema } from "./scenario/schema.ts";
+export { FULL_PLAN, type ScoringPlan } from "./score/run-scorer.ts";
+export {
+  type Cell,
+  MEASURES,
+  type MeasureName,
+  type MeasureSummary,
+  type Score,
+  type Summation,
+} from "./score/score.ts";

@@ -3,6 +3,7 @@ import { fileURLToPath } from "node:url";
 import { Piscina } from "piscina";
 import type { MeasureName, Score } from "../score/score.ts";
 import { type CellJob, type CellTask, runCellTask } from "./cell-task.ts";
+import { taskIndices } from "./task-indices.ts";
 
 /** What of each run is to be measured, for all jobs of a call alike. */
 export interface PoolPlan {
@@ -18,12 +19,10 @@ export interface PoolOptions {
   readonly onCells?: (finished: number) => void;
 }
 
-/** A task should take this many steps, give or take: long enough to hide the hand-over, short enough to keep all threads busy. */
-const STEPS_PER_TASK = 400_000;
-
 /** Runs cells on worker threads; scores come back in the order of the cells, the same bits for any number of threads. */
 export class CellPool {
   private readonly pool: Piscina | null;
+  private readonly workers: number;
   private readonly ownFiles: readonly string[];
   private readonly onCells: (finished: number) => void;
   cellsRun = 0;
@@ -31,6 +30,7 @@ export class CellPool {
 
   constructor(options: PoolOptions = {}) {
     const workers = options.workers ?? availableParallelism();
+    this.workers = workers;
     this.ownFiles = options.ownFiles ?? [];
     this.onCells = options.onCells ?? (() => undefined);
     this.pool =
@@ -40,7 +40,7 @@ export class CellPool {
   async run(jobs: readonly CellJob[], plan: PoolPlan): Promise<Score[]> {
     const scores = new Array<Score>(jobs.length);
     await Promise.all(
-      batches(jobs).map(async (indices) => {
+      taskIndices(jobs, this.workers).map(async (indices) => {
         const task: CellTask = {
           cells: indices.map((i) => jobs[i] as CellJob),
           measures: plan.measures,
@@ -63,34 +63,6 @@ export class CellPool {
   async close(): Promise<void> {
     await this.pool?.close({ force: true });
   }
-}
-
-/** Groups of job indices of about equal work, the largest jobs first. */
-function batches(jobs: readonly CellJob[]): number[][] {
-  const order = jobs
-    .map((_, i) => i)
-    .sort((a, b) => expectedSteps(jobs[b]) - expectedSteps(jobs[a]) || a - b);
-  const groups: number[][] = [];
-  let group: number[] = [];
-  let steps = 0;
-  for (const index of order) {
-    group.push(index);
-    steps += expectedSteps(jobs[index]);
-    if (steps >= STEPS_PER_TASK) {
-      groups.push(group);
-      group = [];
-      steps = 0;
-    }
-  }
-  if (group.length > 0) groups.push(group);
-  return groups;
-}
-
-function expectedSteps(job: CellJob | undefined): number {
-  if (job === undefined) return 0;
-  const { orbits, step, stepsPerOrbit } = job.cell;
-  // A variable-step run is not known beforehand; some hundred steps an orbit is usual.
-  return orbits * (stepsPerOrbit ?? (step === undefined ? 300 : (2 * Math.PI) / step));
 }
 
 function workerFile(): string {

@@ -21,5 +21,5 @@ const TWO_PI = 2 * Math.PI;
 export function nearestTurn(angle: number, previous: number): number {
   const difference = previous - angle;
   if (difference > -Math.PI && difference <= Math.PI) return angle;
-  return angle + TWO_PI * Math.round(difference / TWO_PI);
+  return angle + TWO_PI * Math.floor(difference / TWO_PI + 0.5);
 }

@@ -1,9 +1,9 @@
 import type { Ended } from "./score.ts";
 
 /** Escape needs this distance (in semi-major axes) beside a positive energy: coarse bound runs pass E >= 0 at periapsis. */
-const ESCAPE_DISTANCE = 10;
+export const ESCAPE_DISTANCE = 10;
 /** A body nearer the centre than this share of the exact periapsis distance has collided with it. */
-const COLLISION_SHARE = 1e-4;
+export const COLLISION_SHARE = 1e-4;
 
 export type DivergenceReason = Extract<Ended, { status: "diverged" }>["reason"];
 

@@ -45,6 +45,16 @@ export interface ObservedWindow {
   readonly errors: Readonly<Record<StepMeasure, Float64Array>>;
 }
 
+/** A run of even steps that was scored elsewhere, as it stands after `steps` steps. */
+export interface AdoptedProgress {
+  readonly steps: number;
+  /** x, y, vx, vy. */
+  readonly state: Float64Array;
+  readonly maximum: (name: StepMeasure) => { readonly value: number; readonly atStep: number };
+  readonly phaseUncertain: boolean;
+  readonly divergence: DivergenceReason | null;
+}
+
 export const FULL_PLAN: ScoringPlan = { measures: new Set(MEASURES), summaries: "all", horizons: [] };
 
 const NOTHING: MeasureSummary = {
@@ -67,22 +77,24 @@ const GROWTH_VALUE: Readonly<Record<StepMeasure, GrowthValue>> = {
   radial: "orbit maximum",
 };
 
+/** Errors of the chunk at hand and lengths of its steps; chunks are scored one at a time. */
+const errors = perMeasure(() => new Float64Array(CHUNK_STEPS));
+const lengths = new Float64Array(CHUNK_STEPS);
+
 /** Scores one run, chunk by chunk. */
 export class RunScorer {
   private readonly resolved: ResolvedCell;
   private readonly plan: ScoringPlan;
   private readonly energy0: number;
   private readonly angularMomentum0: number;
-  private readonly circular: boolean;
+  readonly circular: boolean;
   private readonly wholeOrbits: number;
-  private readonly wanted: readonly StepMeasure[];
-  private readonly errors: Readonly<Record<StepMeasure, Float64Array>>;
+  readonly wanted: readonly StepMeasure[];
   private readonly maxima: Readonly<Record<StepMeasure, Maximum>>;
   private readonly summaries: Readonly<Record<StepMeasure, StepSummary>> | null;
   private readonly phaseErrors = new PhaseErrors();
   private readonly apsisErrors: ApsisErrors;
-  private readonly passages: Passages | null;
-  private readonly lengths = new Float64Array(CHUNK_STEPS);
+  readonly passages: Passages | null;
   private readonly lastState = new Float64Array(4);
   private readonly horizonMaxima: HorizonMaxima[] = [];
   private lastTime = 0;
@@ -100,7 +112,6 @@ export class RunScorer {
     this.wanted = STEP_MEASURES.filter(
       (name) => plan.measures.has(name) && !(name === "apsis" && this.circular),
     );
-    this.errors = perMeasure(() => new Float64Array(CHUNK_STEPS));
     this.maxima = perMeasure(() => new Maximum());
     this.summaries =
       plan.summaries === "all"
@@ -118,7 +129,6 @@ export class RunScorer {
     this.passages = wantsPassages
       ? new Passages(reference, start, this.wholeOrbits, plan.summaries === "all")
       : null;
-    if (resolved.step !== null) this.lengths.fill(resolved.step);
     this.lastState.set(start);
   }
 
@@ -135,6 +145,25 @@ export class RunScorer {
     }
     if (end !== null) this.divergence = end.reason;
     return end === null;
+  }
+
+  get eccentricity(): number {
+    return this.resolved.cell.eccentricity;
+  }
+
+  /** Takes over what was scored elsewhere, with horizons kept where it stops at them; passages were reported one by one. */
+  adopt(progress: AdoptedProgress): void {
+    this.steps = progress.steps;
+    this.lastTime = progress.steps * (this.resolved.step as number);
+    this.lastState.set(progress.state);
+    for (const name of this.wanted) {
+      const { value, atStep } = progress.maximum(name);
+      this.maxima[name].value = value;
+      this.maxima[name].atStep = atStep;
+    }
+    this.phaseErrors.uncertain = progress.phaseUncertain;
+    this.closeHorizons(null);
+    this.divergence = progress.divergence;
   }
 
   /** First row at or after `from` that lies beyond the next horizon. */
@@ -183,7 +212,7 @@ export class RunScorer {
 
   private acceptRows(chunk: Chunk, from: number, to: number): void {
     const { rows, exact, times, firstStep } = chunk;
-    const { errors, wanted } = this;
+    const { wanted } = this;
     const { uneven } = this.resolved.stepper;
     const has = (name: StepMeasure): boolean => wanted.includes(name);
     if (has("energy")) energyErrors(rows, from, to, this.energy0, errors.energy);
@@ -220,15 +249,15 @@ export class RunScorer {
     if (uneven) {
       let previous = this.lastTime;
       for (let i = from; i < to; i++) {
-        this.lengths[i] = chunk.times[2 * i]! - previous;
+        lengths[i] = chunk.times[2 * i]! - previous;
         previous = chunk.times[2 * i]!;
       }
-    }
+    } else lengths.fill(this.resolved.step as number, from, to);
     for (let start = from; start < to; ) {
       const orbit = this.orbitOf(chunk, start);
       const stop = this.orbitEnd(chunk, orbit, start, to);
       for (const name of this.wanted) {
-        this.summaries?.[name].accept(this.errors[name], start, stop, this.lengths, orbit);
+        this.summaries?.[name].accept(errors[name], start, stop, lengths, orbit);
       }
       start = stop;
     }
@@ -236,8 +265,7 @@ export class RunScorer {
 
   private orbitOf(chunk: Chunk, row: number): number {
     const { step, stepper } = this.resolved;
-    const time =
-      stepper.uneven || step === null ? chunk.times[2 * row]! : (chunk.firstStep + row) * step;
+    const time = stepper.uneven || step === null ? chunk.times[2 * row]! : (chunk.firstStep + row) * step;
     return Math.max(1, Math.ceil(time / TWO_PI - ORBIT_SLACK));
   }
 
@@ -253,7 +281,7 @@ export class RunScorer {
     return stop;
   }
 
-  finish(trajectory: Trajectory): Score {
+  finish(trajectory: Pick<Trajectory, "evaluations" | "rejectedSteps" | "smallestStep">): Score {
     const { cell, stepsPerOrbit, step } = this.resolved;
     const orbitsMade = this.lastTime / TWO_PI;
     const evaluations = trajectory.evaluations;

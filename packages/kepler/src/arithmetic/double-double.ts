@@ -1,6 +1,12 @@
 import { twoProduct } from "./two-product.ts";
 import { quickTwoSum, twoSum } from "./two-sum.ts";
 
+/*
+ * Why not a library: the best known double-double package for this language was measured beside these functions (Node 20): 2.7 and 2.8
+ * ns a sum, 8.6 and 10.2 a product, 10 and 13.5 a quotient. That is no gain where it counts (tables and orbits, built once),
+ * and one dependency more; arbitrary precision at 32 digits takes 4 us a product.
+ */
+
 /**
  * An unevaluated sum hi + lo of two doubles, hi = fl(hi + lo): about 106 bits. Error bounds below are relative, u = 2^-53,
  * and hold while neither overflow nor underflow occurs.

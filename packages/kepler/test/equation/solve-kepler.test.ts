@@ -92,7 +92,7 @@ describe("against 60 digits", () => {
     "near-circular": () => [10 ** (-20 * random()), random() * Math.PI],
     "where 2022 solvers lose digits": () => [0.99 + 0.01 * random(), 0.0045 * random()],
   };
-  test.each(Object.entries(regions))("at most 1.5 ulp in 400 points of %s", (name, draw) => {
+  test.each(Object.entries(regions))("at most 0.53 ulp in 400 points of %s", (name, draw) => {
     let worst = 0;
     let at = "";
     for (let k = 0; k < 400; k++) {
@@ -103,19 +103,19 @@ describe("against 60 digits", () => {
         at = `e = ${e}, M = ${mean}`;
       }
     }
-    expect(worst, `${name}: ${at}`).toBeLessThan(1.5);
+    expect(worst, `${name}: ${at}`).toBeLessThan(0.53);
   });
 
-  test("at most 0.51 ulp where E is above 1/32 (the table)", () => {
+  test("at most 0.53 ulp for anomalies spread evenly, M from E", () => {
     const draw = seeded(22);
     let worst = 0;
-    for (let k = 0; k < 800; k++) {
+    for (let k = 0; k < 400; k++) {
       const e = draw();
       const anomaly = 0.04 + draw() * 3.1;
       const mean = meanFromEccentricAnomaly(e, anomaly);
       worst = Math.max(worst, errorUlps(e, mean, solveKepler(e, mean)));
     }
-    expect(worst).toBeLessThan(0.51);
+    expect(worst).toBeLessThan(0.53);
   });
 
   test("at most 1 ulp for M far outside a turn", () => {

@@ -28,7 +28,7 @@ describe("invariants without avoidable cancellation", () => {
   test("1 ulp plus 2^-98 of what cancels, from e = 1e-12 to 0.999999 and any point (60 digits)", () => {
     const random = seeded(71);
     const out = new Float64Array(4);
-    for (let k = 0; k < 400; k++) {
+    for (let k = 0; k < 250; k++) {
       const e = k % 2 === 0 ? 10 ** (-12 * random()) : 1 - 10 ** (-6 * random());
       const { x, y, vx, vy } = stateAtTrueAnomalyDegrees(Math.min(e, 0.999999), 360 * random());
       invariantsInto(x, y, vx, vy, out);

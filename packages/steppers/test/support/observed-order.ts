@@ -7,6 +7,16 @@ export function runExactly(program: StepProgram, start: Pairs, steps: number, ti
   const h: [number, number] = [time / steps, 0];
   // time / steps is exact for the powers of two; for others its rounding error is the remainder of the division.
   if (h[0] * steps !== time || !Number.isInteger(Math.log2(steps))) h[1] = remainder(time, steps, h[0]);
+  return runSteps(program, start, steps, h);
+}
+
+/** The same for a step given as a pair. */
+export function runSteps(
+  program: StepProgram,
+  start: Pairs,
+  steps: number,
+  h: readonly [number, number],
+): Pairs {
   let now = pairs(program.step.inputs);
   let next = pairs(program.step.inputs);
   evaluateExactly(program.start, h, start, now);

@@ -27,7 +27,7 @@ const rules = {
   rows: "must have room for four numbers a row",
   dimensions: "must have two or three components in position and velocity alike",
   hyperbola: "must be finite and above 1",
-  parabolaSide: "must lie between the asymptotes (1 + e cos nu above zero)",
+  asymptote: "must lie between the asymptotes (1 + e cos nu above zero)",
   space: "must have three components",
   times: "must hold a high and a low word a time",
 } as const;

@@ -128,7 +128,7 @@ export function stateFromElements(elements: ClassicalElements, gravitationalPara
   const e = ddOf(elements.eccentricity);
   const anomaly = ddSinCos(ddOf(elements.trueAnomaly));
   const divisor = ddAdd(ddOf(1), ddMultiply(e, anomaly.cos));
-  if (!(divisor.hi > 0)) refuse("stateFromElements.trueAnomaly", "parabolaSide", elements.trueAnomaly);
+  if (!(divisor.hi > 0)) refuse("stateFromElements.trueAnomaly", "asymptote", elements.trueAnomaly);
   const r = ddDivide(parameter, divisor);
   const speed = ddSqrt(ddDivide(ddOf(gravitationalParameter), parameter));
   const { toPeriapsis, ahead } = planeAxes(elements);

@@ -21,7 +21,8 @@ const largestSteps = 40;
 /**
  * Hyperbolic anomaly H of the mean anomaly M = e sinh H - H for 1 < e < 1e100 and |M| <= 1e250 e; odd in M to the bit.
  * Newton's iteration in double-double on (e - 1) H + e (sinh H - H) - M, with sinh H - H from Stumpff's functions, started from above
- * the root: near periapsis by the root of the cubic part, far out by H = arsinh((M + H)/e). Error at most 0.51 ulp (some tens of microseconds).
+ * the root: near periapsis by the root of the cubic part, far out by H = arsinh((M + H)/e). The engine's arsinh only starts the
+ * iteration; the result is the same with another. Error at most 0.51 ulp; some tens of microseconds.
  * @throws InvalidInputError for an eccentricity not above 1 or a mean anomaly that is not finite
  */
 export function solveHyperbolicKepler(eccentricity: number, meanAnomaly: number): number {

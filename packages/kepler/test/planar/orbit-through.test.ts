@@ -1,4 +1,6 @@
 import {
+  ddOf,
+  ddScale,
   exactState,
   InvalidInputError,
   orbitThrough,
@@ -9,7 +11,7 @@ import {
 import fc from "fast-check";
 import { describe, expect, test } from "vitest";
 import { precise, precisePair } from "../support/precise.ts";
-import { preciseOrbit } from "../support/precise-orbit.ts";
+import { preciseOrbit, precisePosition } from "../support/precise-orbit.ts";
 
 describe("start states", () => {
   test("periapsis and apoapsis lie exactly on the axis", () => {
@@ -77,6 +79,26 @@ describe("the exact orbit through a rounded start", () => {
       const start = stateAtTrueAnomalyDegrees(e, 33);
       const at = exactState(orbitThrough(start), { hi: 0, lo: 0 });
       expect([at.x.hi, at.y.hi, at.vx.hi, at.vy.hi]).toEqual([start.x, start.y, start.vx, start.vy]);
+    }
+  });
+
+  test("states in 30 digits: within 2^-88 a and 2^-99 of the way, e <= 0.999, to 1e8 periods (60 digits)", () => {
+    for (const e of [0.01, 0.6, 0.9, 0.999]) {
+      const start = stateAtTrueAnomalyDegrees(e, 200);
+      const orbit = orbitThrough(start);
+      const exact = preciseOrbit(start);
+      for (const steps of [3, 1_000_000_007, 5_800_000_019]) {
+        const at = exactState(orbit, ddScale(ddOf(0.1), steps));
+        const expected = precisePosition(exact, precise(0.1).mul(steps));
+        const error = precisePair(at.x)
+          .sub(expected.x)
+          .abs()
+          .add(precisePair(at.y).sub(expected.y).abs())
+          .toNumber();
+        expect(error, `e = ${e}, step ${steps}`).toBeLessThan(
+          2 ** -88 + 2 ** -99 * 0.1 * steps * Math.sqrt((1 + e) / (1 - e)),
+        );
+      }
     }
   });
 

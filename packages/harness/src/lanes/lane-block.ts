@@ -114,6 +114,8 @@ export class LaneBlock {
       phase: 0,
       apsis: 0,
       uncertain: 0,
+      inverse: 0,
+      momentum: 0,
     };
     for (const [name, offset] of Object.entries(scoreRows))
       doubles[offset / 8 + lane] = values[name as keyof typeof values];

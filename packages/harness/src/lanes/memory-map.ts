@@ -32,6 +32,16 @@ const TRACK_ROWS = [
   "meanMotion",
   "meanHi",
   "meanLo",
+  "side",
+  "cosNode",
+  "sinNode",
+  "alongNode",
+  "acrossNode",
+  "radiusNode",
+  "q",
+  "sineTerm",
+  "cosineTerm",
+  "correction",
 ] as const;
 
 const SCORE_ROWS = [
@@ -51,6 +61,8 @@ const SCORE_ROWS = [
   "phase",
   "apsis",
   "uncertain",
+  "inverse",
+  "momentum",
 ] as const;
 
 /** Rows of the exact track, per lane: its constants, and `step`, the steps made. */

@@ -25,23 +25,6 @@ export interface ScoreSetting {
 
 const ROW = STATE_BYTES / 4;
 
-/** What of a step several measures need; each is written where it is first used and shared from then on. */
-interface StepValues {
-  readonly code: LaneCode;
-  readonly lane: Pointer;
-  readonly x: Operand;
-  readonly y: Operand;
-  readonly vx: Operand;
-  readonly vy: Operand;
-  readonly xe: Operand;
-  readonly ye: Operand;
-  readonly vxe: Operand;
-  readonly vye: Operand;
-  readonly r2: Operand;
-  readonly v2: Operand;
-  readonly rising: Operand;
-}
-
 /**
  * The function `score(count, width)`: the measures of `RunScorer` at rows 1 .. count of the stream, operation for operation, and their
  * running maxima; the ends of `findEnd`; and the steps in which a lane passed periapsis, a bit per lane in the word of the step. Returns
@@ -50,24 +33,34 @@ interface StepValues {
 export function scoreCode(setting: ScoreSetting): FunctionCode {
   const code = new LaneCode(2, 10);
   const [count, width] = [code.parameter(0), code.parameter(1)];
-  const [lane, stream, exact] = [code.pointer(), code.pointer(), code.pointer()];
+  const pair = { lane: code.pointer(), stream: code.pointer(), exact: code.pointer() };
   const [streamRow, exactRow, events] = [code.pointer(), code.pointer(), code.pointer()];
   const [passed, passedAny] = [code.pointer(), code.pointer()];
   const nodes = [code.pointer(), code.pointer()] as const;
+  const { measures } = setting;
+  const displaced = (["position", "alongTrack", "radial"] as const).some((name) => measures.has(name));
+  const overLanes = (stage: (writer: StageWriter) => void): void => {
+    code.set(pair.lane, 0);
+    code.set(pair.stream, streamRow);
+    code.set(pair.exact, exactRow);
+    code.repeat(pair.lane, width, () => {
+      stage(new StageWriter(code, setting, pair, nodes));
+      for (const pointer of Object.values(pair)) code.advance(pointer, PAIR_BYTES);
+    });
+  };
   code.set(streamRow, STREAM_AT + setting.streamBytes);
   code.set(exactRow, EXACT_AT + STATE_BYTES);
   code.set(events, EVENTS_AT);
   code.set(passedAny, 0);
   code.countDown(count, () => {
-    code.set(lane, 0);
-    code.set(stream, streamRow);
-    code.set(exact, exactRow);
     code.set(passed, 0);
-    code.repeat(lane, width, () => {
-      const mask = writeScores(code, setting, lane, stream, exact, nodes);
-      if (mask !== null) code.joinBits(passed, mask, lane);
-      for (const pointer of [lane, stream, exact]) code.advance(pointer, PAIR_BYTES);
+    overLanes((writer) => {
+      const alive = writer.endsAndInvariants();
+      if (setting.passages) code.joinBits(passed, writer.passage(alive), pair.lane);
     });
+    if (measures.has("apsis")) overLanes((writer) => writer.apsis());
+    if (measures.has("phase") || displaced) overLanes((writer) => writer.phase());
+    if (displaced) overLanes((writer) => writer.displacements());
     code.storeInteger(events, 0, passed);
     code.join(passedAny, passed);
     code.advance(events, 4);
@@ -77,145 +70,182 @@ export function scoreCode(setting: ScoreSetting): FunctionCode {
   return code.finish("score", passedAny);
 }
 
-/** One step of one pair of lanes; returns the mask of lanes that passed periapsis in it. */
-function writeScores(
-  code: LaneCode,
-  setting: ScoreSetting,
-  lane: Pointer,
-  stream: Pointer,
-  exact: Pointer,
-  nodes: readonly [Pointer, Pointer],
-): Operand | null {
-  const [x, y, vx, vy] = [0, 1, 2, 3].map((c) => code.load(stream, c * ROW)) as unknown as Four;
-  const [xe, ye, vxe, vye] = [0, 1, 2, 3].map((c) => code.row(exact, c * ROW)) as unknown as Four;
-  const values: StepValues = {
-    ...{ code, lane, x, y, vx, vy, xe, ye, vxe, vye },
-    r2: code.add(code.mul(x, x), code.mul(y, y)),
-    v2: code.add(code.mul(vx, vx), code.mul(vy, vy)),
-    rising: code.add(code.mul(x, vx), code.mul(y, vy)),
-  };
-  const step = code.add(code.row(lane, scoreRows.step), code.constant(1));
-  code.store(lane, scoreRows.step, step);
-  const alive = writeAlive(values);
-  code.store(lane, scoreRows.alive, alive);
-  code.store(lane, scoreRows.lastAlive, code.select(alive, step, code.row(lane, scoreRows.lastAlive)));
-  const keep = (name: StepMeasure, error: Operand): void => {
-    if (!setting.measures.has(name)) return;
+/** Pointers to the pair of lanes at work: in the rows of lanes, in the stream, in the exact states. */
+interface PairPlaces {
+  readonly lane: Pointer;
+  readonly stream: Pointer;
+  readonly exact: Pointer;
+}
+
+/** Writes one stage of scoring for one pair of lanes. Stages are short, so that several pairs are under way at once. */
+class StageWriter {
+  private readonly code: LaneCode;
+  private readonly setting: ScoreSetting;
+  private readonly places: PairPlaces;
+  private readonly nodes: readonly [Pointer, Pointer];
+
+  constructor(code: LaneCode, setting: ScoreSetting, places: PairPlaces, nodes: readonly [Pointer, Pointer]) {
+    this.code = code;
+    this.setting = setting;
+    this.places = places;
+    this.nodes = nodes;
+  }
+
+  /** `findEnd`, energy, angular momentum; returns the mask of lanes that are alive so far and at this step. */
+  endsAndInvariants(): Operand {
+    const { code } = this;
+    const { measures } = this.setting;
+    const [x, y] = this.position("stream");
+    const [vx, vy] = this.velocity("stream");
+    const step = code.add(this.row("step"), this.constant(1));
+    this.store("step", step);
+    const r2 = this.dot(x, y, x, y);
+    const v2 = this.dot(vx, vy, vx, vy);
+    const inverse = code.div(this.constant(1), code.sqrt(r2));
+    const energy = code.sub(code.mul(this.constant(0.5), v2), inverse);
+    const alive = this.alive(r2, v2, energy);
+    this.store("alive", alive);
+    this.store("lastAlive", code.select(alive, step, this.row("lastAlive")));
+    if (measures.has("energy")) {
+      this.keep(
+        "energy",
+        code.mul(code.sub(energy, this.row("energy0")), this.row("energyScale")),
+        alive,
+        step,
+      );
+    }
+    const momentum = code.sub(code.mul(x, vy), code.mul(y, vx));
+    if (measures.has("angularMomentum")) {
+      const error = code.mul(code.sub(momentum, this.row("momentum0")), this.row("momentumScale"));
+      this.keep("angularMomentum", error, alive, step);
+    }
+    if (measures.has("apsis")) {
+      this.store("inverse", inverse);
+      this.store("momentum", momentum);
+    }
+    return alive;
+  }
+
+  private alive(r2: Operand, v2: Operand, energy: Operand): Operand {
+    const { code } = this;
+    const infinity = this.constant(Number.POSITIVE_INFINITY);
+    const finite = code.and(code.less(r2, infinity), code.less(v2, infinity));
+    const apart = code.greaterEqual(r2, this.row("collision2"));
+    const zero = this.constant(0);
+    const unbound = code.and(code.greaterEqual(energy, zero), code.greater(this.rising(), zero));
+    const escaped = code.and(code.greater(r2, this.constant(ESCAPE_DISTANCE * ESCAPE_DISTANCE)), unbound);
+    return code.and(this.row("alive"), code.andNot(code.and(finite, apart), escaped));
+  }
+
+  /** Mask of lanes where q.v, or the side of the direction of the start, rises through zero in this step. */
+  passage(alive: Operand): Operand {
+    const { code } = this;
+    const { circular } = this.setting;
+    const [x, y] = this.position("stream");
+    const zero = this.constant(0);
+    const startX = this.row("startX");
+    const startY = this.row("startY");
+    const side = circular ? code.sub(code.mul(startX, y), code.mul(startY, x)) : this.rising();
+    const before = code.less(this.row("side"), zero);
+    const rises = code.and(code.and(before, code.greaterEqual(side, zero)), alive);
+    this.store("side", side);
+    return circular ? code.and(rises, code.greater(this.dot(x, y, startX, startY), zero)) : rises;
+  }
+
+  /** `ApsisErrors`. */
+  apsis(): void {
+    const { code } = this;
+    const [x, y] = this.position("stream");
+    const [vx, vy] = this.velocity("stream");
+    const momentum = code.load(this.places.lane, scoreRows.momentum);
+    const inverse = code.load(this.places.lane, scoreRows.inverse);
+    const ax = code.sub(code.mul(vy, momentum), code.mul(x, inverse));
+    const ay = code.sub(code.mul(code.negate(vx), momentum), code.mul(y, inverse));
+    const [ex, ey] = [this.row("apsisX"), this.row("apsisY")];
+    const cross = code.sub(code.mul(ex, ay), code.mul(ey, ax));
+    const angle = writeAngle(code, cross, this.dot(ex, ey, ax, ay), this.nodes);
+    writeNearestTurn(code, angle, code.load(this.places.lane, scoreRows.apsis));
+    this.store("apsis", angle);
+    this.keep("apsis", angle, this.row("alive"), this.row("step"));
+  }
+
+  /** `PhaseErrors`. */
+  phase(): void {
+    const { code } = this;
+    const [x, y] = this.position("stream");
+    const [xe, ye] = this.position("exact");
+    const cross = code.sub(code.mul(xe, y), code.mul(ye, x));
+    const previous = code.load(this.places.lane, scoreRows.phase);
+    const angle = writeAngle(code, cross, this.dot(xe, ye, x, y), this.nodes);
+    writeNearestTurn(code, angle, previous);
+    const jump = code.abs(code.sub(angle, previous));
+    const jumped = code.and(code.greater(jump, this.constant(0.5 * Math.PI)), this.row("alive"));
+    this.store("uncertain", code.or(this.row("uncertain"), jumped));
+    this.store("phase", angle);
+    if (this.setting.measures.has("phase")) this.keep("phase", angle, this.row("alive"), this.row("step"));
+  }
+
+  /** `displacementErrors`; the phase is known. */
+  displacements(): void {
+    const { code } = this;
+    const { measures } = this.setting;
+    const [x, y] = this.position("stream");
+    const [xe, ye] = this.position("exact");
+    const [dx, dy] = [code.sub(x, xe), code.sub(y, ye)];
+    const keep = (name: StepMeasure, error: Operand): void => {
+      this.keep(name, error, this.row("alive"), this.row("step"));
+    };
+    if (measures.has("position")) keep("position", code.sqrt(this.dot(dx, dy, dx, dy)));
+    if (measures.has("alongTrack")) {
+      const [vxe, vye] = this.velocity("exact");
+      const along = code.div(this.dot(dx, dy, vxe, vye), code.sqrt(this.dot(vxe, vye, vxe, vye)));
+      const phase = code.load(this.places.lane, scoreRows.phase);
+      const far = code.greater(code.abs(phase), this.constant(ALONG_TRACK_PHASE_LIMIT));
+      keep("alongTrack", code.select(far, phase, along));
+    }
+    if (measures.has("radial")) {
+      keep("radial", code.div(this.dot(dx, dy, xe, ye), code.sqrt(this.dot(xe, ye, xe, ye))));
+    }
+  }
+
+  /** `Maximum`. */
+  private keep(name: StepMeasure, error: Operand, alive: Operand, step: Operand): void {
+    const { code } = this;
+    const { lane } = this.places;
     const size = code.abs(error);
     const largest = code.load(lane, maximumRows[name]);
     const larger = code.and(code.greater(size, largest), alive);
     code.store(lane, maximumRows[name], code.select(larger, size, largest));
     code.store(lane, maximumAtRows[name], code.select(larger, step, code.row(lane, maximumAtRows[name])));
-  };
-  writeInvariants(values, setting, keep);
-  if (setting.measures.has("apsis")) writeApsis(values, nodes, keep);
-  const displaced = (["position", "alongTrack", "radial"] as const).some((name) =>
-    setting.measures.has(name),
-  );
-  if (setting.measures.has("phase") || displaced) {
-    const phase = writePhase(values, nodes, alive);
-    keep("phase", phase);
-    if (displaced) writeDisplacements(values, phase, setting, keep);
   }
-  return setting.passages ? writePassage(values, setting.circular, alive) : null;
-}
 
-type Four = readonly [Operand, Operand, Operand, Operand];
-type Keep = (name: StepMeasure, error: Operand) => void;
-
-/** Alive so far and at this step: `findEnd` has nothing to say. */
-function writeAlive({ code, lane, r2, v2, rising }: StepValues): Operand {
-  const c = (value: number): Operand => code.constant(value);
-  const infinity = c(Number.POSITIVE_INFINITY);
-  const finite = code.and(code.less(r2, infinity), code.less(v2, infinity));
-  const apart = code.greaterEqual(r2, code.row(lane, scoreRows.collision2));
-  const energy = code.sub(code.mul(c(0.5), v2), code.div(c(1), code.sqrt(r2)));
-  const unbound = code.and(code.greaterEqual(energy, c(0)), code.greater(rising, c(0)));
-  const escaped = code.and(code.greater(r2, c(ESCAPE_DISTANCE * ESCAPE_DISTANCE)), unbound);
-  const sound = code.andNot(code.and(finite, apart), escaped);
-  return code.and(code.row(lane, scoreRows.alive), sound);
-}
-
-function writeInvariants(values: StepValues, { measures }: ScoreSetting, keep: Keep): void {
-  const { code, lane, r2, v2 } = values;
-  const row = (name: keyof typeof scoreRows): Operand => code.row(lane, scoreRows[name]);
-  const c = (value: number): Operand => code.constant(value);
-  if (measures.has("energy")) {
-    const energy = code.sub(code.mul(c(0.5), v2), code.div(c(1), code.sqrt(r2)));
-    keep("energy", code.mul(code.sub(energy, row("energy0")), row("energyScale")));
+  private position(of: "stream" | "exact"): readonly [Operand, Operand] {
+    return [this.code.load(this.places[of], 0), this.code.load(this.places[of], ROW)];
   }
-  if (measures.has("angularMomentum")) {
-    const momentum = writeMomentum(values);
-    keep("angularMomentum", code.mul(code.sub(momentum, row("momentum0")), row("momentumScale")));
+
+  private velocity(of: "stream" | "exact"): readonly [Operand, Operand] {
+    return [this.code.load(this.places[of], 2 * ROW), this.code.load(this.places[of], 3 * ROW)];
   }
-}
 
-function writeMomentum({ code, x, y, vx, vy }: StepValues): Operand {
-  return code.sub(code.mul(x, vy), code.mul(y, vx));
-}
-
-function writeApsis(values: StepValues, nodes: readonly [Pointer, Pointer], keep: Keep): void {
-  const { code, lane, x, y, vx, vy, r2 } = values;
-  const momentum = writeMomentum(values);
-  const inverse = code.div(code.constant(1), code.sqrt(r2));
-  const ax = code.sub(code.mul(vy, momentum), code.mul(x, inverse));
-  const ay = code.sub(code.mul(code.negate(vx), momentum), code.mul(y, inverse));
-  const ex = code.row(lane, scoreRows.apsisX);
-  const ey = code.row(lane, scoreRows.apsisY);
-  const cross = code.sub(code.mul(ex, ay), code.mul(ey, ax));
-  const dot = code.add(code.mul(ex, ax), code.mul(ey, ay));
-  const angle = writeAngle(code, cross, dot, nodes);
-  writeNearestTurn(code, angle, code.load(lane, scoreRows.apsis));
-  code.store(lane, scoreRows.apsis, angle);
-  keep("apsis", angle);
-}
-
-function writePhase(values: StepValues, nodes: readonly [Pointer, Pointer], alive: Operand): Operand {
-  const { code, lane, x, y, xe, ye } = values;
-  const cross = code.sub(code.mul(xe, y), code.mul(ye, x));
-  const dot = code.add(code.mul(xe, x), code.mul(ye, y));
-  const previous = code.load(lane, scoreRows.phase);
-  const phase = writeAngle(code, cross, dot, nodes);
-  writeNearestTurn(code, phase, previous);
-  const jump = code.abs(code.sub(phase, previous));
-  const jumped = code.and(code.greater(jump, code.constant(0.5 * Math.PI)), alive);
-  code.store(lane, scoreRows.uncertain, code.or(code.row(lane, scoreRows.uncertain), jumped));
-  code.store(lane, scoreRows.phase, phase);
-  return phase;
-}
-
-function writeDisplacements(
-  { code, x, y, xe, ye, vxe, vye }: StepValues,
-  phase: Operand,
-  { measures }: ScoreSetting,
-  keep: Keep,
-): void {
-  const dx = code.sub(x, xe);
-  const dy = code.sub(y, ye);
-  const dot = (ax: Operand, ay: Operand, bx: Operand, by: Operand): Operand =>
-    code.add(code.mul(ax, bx), code.mul(ay, by));
-  if (measures.has("position")) keep("position", code.sqrt(dot(dx, dy, dx, dy)));
-  if (measures.has("alongTrack")) {
-    const along = code.div(dot(dx, dy, vxe, vye), code.sqrt(dot(vxe, vye, vxe, vye)));
-    const far = code.greater(code.abs(phase), code.constant(ALONG_TRACK_PHASE_LIMIT));
-    keep("alongTrack", code.select(far, phase, along));
+  private rising(): Operand {
+    const [x, y] = this.position("stream");
+    const [vx, vy] = this.velocity("stream");
+    return this.dot(x, y, vx, vy);
   }
-  if (measures.has("radial")) {
-    keep("radial", code.div(dot(dx, dy, xe, ye), code.sqrt(dot(xe, ye, xe, ye))));
-  }
-}
 
-/** q.v, or the side of the direction of the start, rises through zero in this step. */
-function writePassage(values: StepValues, circular: boolean, alive: Operand): Operand {
-  const { code, lane, x, y, rising } = values;
-  const zero = code.constant(0);
-  const startX = code.row(lane, scoreRows.startX);
-  const startY = code.row(lane, scoreRows.startY);
-  const side = circular ? code.sub(code.mul(startX, y), code.mul(startY, x)) : rising;
-  const before = code.less(code.row(lane, scoreRows.side), zero);
-  const rises = code.and(code.and(before, code.greaterEqual(side, zero)), alive);
-  code.store(lane, scoreRows.side, side);
-  if (!circular) return rises;
-  const ahead = code.greater(code.add(code.mul(x, startX), code.mul(y, startY)), zero);
-  return code.and(rises, ahead);
+  private dot(ax: Operand, ay: Operand, bx: Operand, by: Operand): Operand {
+    return this.code.add(this.code.mul(ax, bx), this.code.mul(ay, by));
+  }
+
+  private row(name: keyof typeof scoreRows): Operand {
+    return this.code.row(this.places.lane, scoreRows[name]);
+  }
+
+  private store(name: keyof typeof scoreRows, value: Operand): void {
+    this.code.store(this.places.lane, scoreRows[name], value);
+  }
+
+  private constant(value: number): Operand {
+    return this.code.constant(value);
+  }
 }

@@ -17,19 +17,20 @@ export function trackCode(): FunctionCode {
   const [lane, exact, out] = [code.pointer(), code.pointer(), code.pointer()];
   const [first, second] = [code.pointer(), code.pointer()];
   code.set(out, EXACT_AT + STATE_BYTES);
-  code.countDown(count, () => {
-    code.set(lane, 0);
-    code.repeat(lane, width, () => {
-      writeMeanAnomaly(code, lane);
-      code.advance(lane, PAIR_BYTES);
-    });
+  const overLanes = (body: () => void): void => {
     code.set(lane, 0);
     code.set(exact, out);
     code.repeat(lane, width, () => {
-      writeState(code, lane, exact, [first, second]);
+      body();
       code.advance(lane, PAIR_BYTES);
       code.advance(exact, PAIR_BYTES);
     });
+  };
+  code.countDown(count, () => {
+    overLanes(() => writeMeanAnomaly(code, lane));
+    overLanes(() => writeNode(code, lane, [first, second]));
+    overLanes(() => writeCorrection(code, lane));
+    overLanes(() => writeState(code, lane, exact));
     code.advance(out, STATE_BYTES);
   });
   return code.finish("track");
@@ -58,12 +59,8 @@ function writeMeanAnomaly(code: LaneCode, lane: Pointer): void {
   code.store(lane, trackRows.meanLo, code.add(vLow, code.add(uLow, start)));
 }
 
-function writeState(
-  code: LaneCode,
-  lane: Pointer,
-  exact: Pointer,
-  [first, second]: readonly [Pointer, Pointer],
-): void {
+/** Looks the node of the table up and forms the arguments of the correction. */
+function writeNode(code: LaneCode, lane: Pointer, [first, second]: readonly [Pointer, Pointer]): void {
   const row = (name: keyof typeof trackRows): Operand => code.row(lane, trackRows[name]);
   const c = (value: number): Operand => code.constant(value);
   const hi = code.load(lane, trackRows.meanHi);
@@ -80,24 +77,34 @@ function writeState(
   });
   const [meanNode, meanNodeLow, cosNode, sinNode, alongNode, acrossNode, radiusNode, inverse] =
     columns as unknown as readonly [Operand, Operand, Operand, Operand, Operand, Operand, Operand, Operand];
-  const e = code.load(lane, trackRows.e);
-  const scale = code.mul(e, inverse);
+  const scale = code.mul(row("e"), inverse);
   const offNode = code.sub(code.mul(side, row("meanLo")), meanNodeLow);
   const q = code.mul(code.add(code.sub(turns, meanNode), offNode), code.mul(c(TWO_PI), inverse));
-  const d = writeCorrection(code, q, code.mul(scale, sinNode), code.mul(scale, cosNode));
+  const kept = { side, cosNode, sinNode, alongNode, acrossNode, radiusNode, q };
+  for (const [name, value] of Object.entries(kept))
+    code.store(lane, trackRows[name as keyof typeof kept], value);
+  code.store(lane, trackRows.sineTerm, code.mul(scale, sinNode));
+  code.store(lane, trackRows.cosineTerm, code.mul(scale, cosNode));
+}
+
+/** State from the node and the anomaly's correction. */
+function writeState(code: LaneCode, lane: Pointer, exact: Pointer): void {
+  const row = (name: keyof typeof trackRows): Operand => code.row(lane, trackRows[name]);
+  const d = code.load(lane, trackRows.correction);
+  const [side, cosNode, sinNode] = [row("side"), row("cosNode"), row("sinNode")];
   const z = code.mul(d, d);
   const sine = code.mul(d, series(code, z, [1, -1 / 6, 1 / 120, -1 / 5040]));
   const versine = code.mul(z, series(code, z, [0.5, -1 / 24, 1 / 720]));
   const dCos = code.add(code.mul(cosNode, versine), code.mul(sinNode, sine));
   const dSin = code.sub(code.mul(cosNode, sine), code.mul(sinNode, versine));
-  const axisRatio = code.load(lane, trackRows.axisRatio);
-  const along = code.sub(alongNode, dCos);
-  const across = code.mul(side, code.add(acrossNode, code.mul(axisRatio, dSin)));
-  const rate = code.div(row("meanMotion"), code.add(radiusNode, code.mul(e, dCos)));
+  const axisRatio = row("axisRatio");
+  const along = code.sub(row("alongNode"), dCos);
+  const across = code.mul(side, code.add(row("acrossNode"), code.mul(axisRatio, dSin)));
+  const rate = code.div(row("meanMotion"), code.add(row("radiusNode"), code.mul(row("e"), dCos)));
   const vAlong = code.mul(code.mul(code.negate(side), code.add(sinNode, dSin)), rate);
   const vAcross = code.mul(code.mul(axisRatio, code.sub(cosNode, dCos)), rate);
-  const turned = (x: Operand, y: Operand, p: Operand, q2: Operand): Operand =>
-    code.add(code.mul(p, x), code.mul(q2, y));
+  const turned = (x: Operand, y: Operand, p: Operand, q: Operand): Operand =>
+    code.add(code.mul(p, x), code.mul(q, y));
   code.store(exact, 0, turned(along, across, row("px"), row("qx")));
   code.store(exact, ROW, turned(along, across, row("py"), row("qy")));
   code.store(exact, 2 * ROW, turned(vAlong, vAcross, row("px"), row("qx")));
@@ -105,8 +112,11 @@ function writeState(
 }
 
 /** `anomalyCorrection` of the reference package in lanes. */
-function writeCorrection(code: LaneCode, q: Operand, a: Operand, b: Operand): Operand {
+function writeCorrection(code: LaneCode, lane: Pointer): void {
   const c = (value: number): Operand => code.constant(value);
+  const q = code.load(lane, trackRows.q);
+  const a = code.load(lane, trackRows.sineTerm);
+  const b = code.load(lane, trackRows.cosineTerm);
   const a2 = code.mul(c(0.5), a);
   const b6 = code.mul(b, c(1 / 6));
   const cubic = code.sub(code.mul(code.mul(c(2), a2), a2), b6);
@@ -122,7 +132,7 @@ function writeCorrection(code: LaneCode, q: Operand, a: Operand, b: Operand): Op
   const lag = code.mul(code.mul(d, z), series(code, z, [1 / 6, -1 / 120, 1 / 5040]));
   const residual = code.add(code.add(code.sub(d, q), code.mul(a, versine)), code.mul(b, lag));
   const slope = code.add(code.add(c(1), code.mul(a, code.sub(d, lag))), code.mul(b, versine));
-  return code.sub(d, code.div(residual, slope));
+  code.store(lane, trackRows.correction, code.sub(d, code.div(residual, slope)));
 }
 
 /** first + z (second + z (third + ...)). */

@@ -61,6 +61,10 @@ export interface StepWords {
   readonly w4: number;
 }
 
+/**
+ * The words of a step of h (normalised time): their sum is h times the rate less whole turns, to 2^-100 of the rate; with |k| <= 2^34
+ * the products k w1, k w2 and k w3 are exact.
+ */
 export function stepWords(turnsPerTime: DoubleDouble, h: number): StepWords {
   const exact = ddScale(turnsPerTime, h);
   const fraction = ddSubtract(exact, ddOf(Math.round(exact.hi)));

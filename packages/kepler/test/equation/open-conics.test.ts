@@ -12,6 +12,7 @@ import { seeded } from "../support/random.ts";
 
 const degree = Math.PI / 180;
 
+// Printed values are recalled, or quoted at second hand, from the sources named; each was recomputed at 40 digits from its inputs.
 describe("Barker's equation B + B^3/3 = W", () => {
   test("Vallado, example 2-2: four digits, as the printed inputs are rounded", () => {
     const parameterKm = 25512;

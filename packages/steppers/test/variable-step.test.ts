@@ -65,6 +65,26 @@ describe("every variable-step stepper", () => {
   });
 });
 
+describe("a longest step", () => {
+  it.each(variable)("%s makes none longer, and still lands on the end", (_, found) => {
+    const maxStep = 0.01;
+    const start = { state: periapsis(0.3), step: 0, tolerance: 1e-4, endTime: [0.995, 0] as const, maxStep };
+    const run = found.begin(start);
+    const rows = new Float64Array(4 * 1000);
+    const times = new Float64Array(2000);
+    const steps = run.advance(1000, rows, times);
+    expect(steps).toBeGreaterThanOrEqual(100);
+    expect(times[2 * steps - 2]).toBe(0.995);
+    let before = 0;
+    for (let n = 0; n < steps; n += 1) {
+      // Differences of times near 1 are rounded in their last place.
+      expect(times[2 * n]! - before).toBeLessThanOrEqual(maxStep + 2 ** -52);
+      before = times[2 * n]!;
+    }
+    expect(() => found.begin({ ...start, maxStep: 0 })).toThrow("start.maxStep");
+  });
+});
+
 describe("dense output", () => {
   const dense = variable.filter(([, found]) => found.denseOutput);
   it.each(dense)(

@@ -3,13 +3,15 @@ import { invalid } from "../errors.ts";
 import { countEvaluations } from "../program/count.ts";
 import { type SuppliedForce, supply } from "../program/executable.ts";
 import type { Start, Trajectory } from "../stepper.ts";
-import { checkAdvance, dimensionOf } from "./begin.ts";
+import { checkAdvance } from "./begin.ts";
 import { power64 } from "./controller.ts";
+import { allFinite, copy } from "./copy.ts";
 import { type Interpolate, nystromInterpolant } from "./dense.ts";
 import { advanceTime, type Time, timeUntil } from "./double-double.ts";
 import { firstStep } from "./first-step.ts";
 import type { CompiledCollocation } from "./implicit.ts";
 import { iterate } from "./sweeps.ts";
+import { trialStep, variableStart } from "./variable-start.ts";
 
 /** What a variable-step collocation needs in doubles: its nodes, their basis polynomials (lowest power first) and dense-output rows. */
 export interface CollocationInDoubles {
@@ -42,6 +44,7 @@ export class RadauRun implements Trajectory {
   readonly #force: SuppliedForce;
   readonly #width: number;
   readonly #tolerance: number;
+  readonly #longest: number;
   readonly #end: Time;
   readonly #time: Time = { hi: 0, lo: 0 };
   readonly #timeBefore: Time = { hi: 0, lo: 0 };
@@ -58,22 +61,15 @@ export class RadauRun implements Trajectory {
   readonly #interpolant: Interpolate;
 
   constructor(start: Start, code: CompiledCollocation, numbers: CollocationInDoubles) {
-    const d = dimensionOf(start);
-    const { tolerance, endTime, summation = "plain" } = start;
-    if (!(tolerance !== undefined && tolerance > 0 && tolerance < 1)) throw invalid.tolerance(tolerance);
-    if (
-      !(endTime !== undefined && endTime[0] > 0 && Number.isFinite(endTime[0]) && Number.isFinite(endTime[1]))
-    ) {
-      throw invalid.endTime(endTime);
-    }
-    if (summation !== "plain") throw invalid.summation(summation);
+    const { dimension: d, tolerance, end, maxStep } = variableStart(start);
+    this.#longest = maxStep;
     this.#code = code;
     this.#program = code.program;
     this.#numbers = numbers;
     this.#force = supply(d, start.acceleration);
     this.#width = 2 * d;
     this.#tolerance = Math.min(1, 1e4 * Math.sqrt(tolerance));
-    this.#end = { hi: endTime[0], lo: endTime[1] };
+    this.#end = end;
     this.#inputs = new Float64Array(this.#program.sweep.inputs);
     this.#swept = new Float64Array(this.#program.sweep.outputs.length);
     this.#finished = new Float64Array(this.#program.finish.outputs.length);
@@ -83,7 +79,7 @@ export class RadauRun implements Trajectory {
     this.#interpolant = nystromInterpolant(numbers.position, numbers.velocity);
     this.#evaluateFirst();
     for (let i = 1; i < this.#program.stages; i += 1) this.#inputs.copyWithin((2 + i) * d, 2 * d, 3 * d);
-    this.#step = Math.min(firstStep(this.#inputs, d, tolerance, 7), endTime[0]);
+    this.#step = Math.min(firstStep(this.#inputs, d, tolerance, 7), end.hi);
   }
 
   advance(maxSteps: number, rows: Float64Array, times?: Float64Array): number {
@@ -91,7 +87,7 @@ export class RadauRun implements Trajectory {
     for (let n = 0; n < maxSteps; n += 1) {
       if (timeUntil(this.#time, this.#end.hi, this.#end.lo) <= 0) return n;
       this.#makeStep();
-      rows.set(this.#inputs.subarray(0, this.#width), n * this.#width);
+      copy(this.#inputs, 0, rows, n * this.#width, this.#width);
       times![2 * n] = this.#time.hi;
       times![2 * n + 1] = this.#time.lo;
     }
@@ -107,10 +103,9 @@ export class RadauRun implements Trajectory {
   #makeStep(): void {
     const smallest = this.#end.hi * 2 ** -60;
     const remaining = timeUntil(this.#time, this.#end.hi, this.#end.lo);
-    const hopeless = !this.#inputs.subarray(0, this.#width).every(Number.isFinite);
+    const hopeless = !allFinite(this.#inputs, this.#width);
     for (;;) {
-      const last = this.#step * 1.0001 >= remaining;
-      const h = last ? remaining : this.#step;
+      const h = trialStep(this.#step, remaining, this.#longest);
       // The guess for this step was made for #step; stretching it to the end changes little.
       const error = this.#trial(h);
       const factor = error > 0 ? safety / power64(error, 9) : largestFactor;
@@ -118,7 +113,7 @@ export class RadauRun implements Trajectory {
       const trend = this.#lastStep > 0 ? Math.min((h / this.#lastStep) * (factor / this.#lastFactor), 1) : 1;
       const next = h * Math.min(Math.max(factor * trend, smallestFactor), largestFactor);
       if (error <= 1 || hopeless || h <= smallest) {
-        this.#accept(h, last);
+        this.#accept(h, h === remaining);
         this.#lastFactor = factor;
         this.#step = next;
         this.#foretell(this.#lastNodes, 1, next / h);

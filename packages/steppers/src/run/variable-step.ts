@@ -9,10 +9,12 @@ import type { Program } from "../program/program.ts";
 import type { Start, Stepper, Trajectory } from "../stepper.ts";
 import { checkAdvance, dimensionOf } from "./begin.ts";
 import { type Controller, makeController } from "./controller.ts";
+import { allFinite, copy } from "./copy.ts";
 import type { Dense } from "./dense.ts";
 import { advanceTime, type Time, timeUntil } from "./double-double.ts";
 import { firstStep } from "./first-step.ts";
 import type { Claims } from "./fixed-step.ts";
+import { trialStep, variableStart } from "./variable-start.ts";
 
 export type PairClaims = Omit<Claims, "uneven"> & { readonly embeddedOrder: number };
 
@@ -93,6 +95,7 @@ class VariableStepRun implements Trajectory {
   smallestStep: number = Number.POSITIVE_INFINITY;
   readonly interpolate?: (timeHi: number, timeLo: number, out: Float64Array) => void;
   readonly #pair: Compiled;
+  readonly #trialEvaluations: number;
   readonly #width: number;
   readonly #force: SuppliedForce;
   readonly #controller: Controller;
@@ -102,6 +105,7 @@ class VariableStepRun implements Trajectory {
   /** State, then the acceleration there. */
   readonly #inputs: Float64Array;
   readonly #outputs: Float64Array;
+  readonly #first: Float64Array;
   /** Where the last step made began, and its length. */
   readonly #before: Float64Array;
   readonly #timeBefore: Time = { hi: 0, lo: 0 };
@@ -112,29 +116,22 @@ class VariableStepRun implements Trajectory {
   #slopes: Float64Array | null = null;
 
   constructor(start: Start, pair: Compiled, lowerOrder: number) {
-    const d = dimensionOf(start);
-    const { tolerance, endTime, maxStep = Number.POSITIVE_INFINITY, summation = "plain" } = start;
-    if (!(tolerance !== undefined && tolerance > 0 && tolerance < 1)) throw invalid.tolerance(tolerance);
-    if (
-      !(endTime !== undefined && endTime[0] > 0 && Number.isFinite(endTime[0]) && Number.isFinite(endTime[1]))
-    ) {
-      throw invalid.endTime(endTime);
-    }
-    if (summation !== "plain") throw invalid.summation(summation);
-    if (!(maxStep > 0)) throw invalid.maxStep(maxStep);
+    const { dimension: d, tolerance, end, maxStep } = variableStart(start);
     this.#longest = maxStep;
     this.#pair = pair;
+    this.#trialEvaluations = countEvaluations(pair.program.trial);
     this.#width = 2 * d;
     this.#force = supply(d, start.acceleration);
     this.#controller = makeController(lowerOrder);
     this.#tolerance = tolerance;
-    this.#end = { hi: endTime[0], lo: endTime[1] };
+    this.#end = end;
     this.#inputs = new Float64Array(3 * d);
     this.#inputs.set(start.state);
     this.#before = start.state.slice();
     this.#outputs = new Float64Array(pair.program.trial.outputs.length);
+    this.#first = new Float64Array(d);
     this.#evaluateFirst();
-    this.#step = Math.min(firstStep(this.#inputs, d, tolerance, lowerOrder), endTime[0], maxStep);
+    this.#step = Math.min(firstStep(this.#inputs, d, tolerance, lowerOrder), end.hi);
     const { dense } = pair;
     if (dense !== null) this.interpolate = (hi, lo, out) => this.#interpolate(dense, hi, lo, out);
   }
@@ -144,7 +141,7 @@ class VariableStepRun implements Trajectory {
     for (let n = 0; n < maxSteps; n += 1) {
       if (timeUntil(this.#time, this.#end.hi, this.#end.lo) <= 0) return n;
       this.#makeStep();
-      rows.set(this.#inputs.subarray(0, this.#width), n * this.#width);
+      copy(this.#inputs, 0, rows, n * this.#width, this.#width);
       times![2 * n] = this.#time.hi;
       times![2 * n + 1] = this.#time.lo;
     }
@@ -158,17 +155,15 @@ class VariableStepRun implements Trajectory {
     const hopeless = !allFinite(this.#inputs, this.#width);
     let rejected = false;
     for (;;) {
-      // A step that nearly reaches the end is stretched to it, so that no sliver of a step remains.
-      const last = this.#step * 1.0001 >= remaining;
-      const h = last ? remaining : this.#step;
+      const h = trialStep(this.#step, remaining, this.#longest);
       this.#pair.trial.evaluate(h, this.#inputs, this.#outputs, this.#force);
-      this.evaluations += countEvaluations(this.#pair.program.trial);
+      this.evaluations += this.#trialEvaluations;
       const finite = allFinite(this.#outputs, this.#width);
       const ratio = this.#outputs[this.#width]! / this.#tolerance;
       const error = finite && ratio >= 0 ? ratio : Number.POSITIVE_INFINITY;
       if (error <= 1 || hopeless || h <= smallest) {
-        this.#accept(h, last);
-        this.#step = Math.min(this.#longest, h * this.#controller.accepted(Math.min(error, 1), rejected));
+        this.#accept(h, h === remaining);
+        this.#step = h * this.#controller.accepted(Math.min(error, 1), rejected);
         return;
       }
       rejected = true;
@@ -179,24 +174,25 @@ class VariableStepRun implements Trajectory {
 
   #accept(h: number, last: boolean): void {
     const width = this.#width;
-    this.#before.set(this.#inputs.subarray(0, width));
+    copy(this.#inputs, 0, this.#before, 0, width);
     this.#timeBefore.hi = this.#time.hi;
     this.#timeBefore.lo = this.#time.lo;
     this.#lastStep = h;
     this.#slopes = null;
-    if (last) Object.assign(this.#time, this.#end);
-    else advanceTime(this.#time, h);
+    if (last) {
+      this.#time.hi = this.#end.hi;
+      this.#time.lo = this.#end.lo;
+    } else advanceTime(this.#time, h);
     if (!last || this.smallestStep === Number.POSITIVE_INFINITY)
       this.smallestStep = Math.min(this.smallestStep, h);
-    this.#inputs.set(this.#outputs.subarray(0, width));
-    if (this.#pair.program.lastIsFirst) {
-      this.#inputs.set(this.#outputs.subarray(width + 1, width + 1 + width / 2), width);
-    } else this.#evaluateFirst();
+    copy(this.#outputs, 0, this.#inputs, 0, width);
+    if (this.#pair.program.lastIsFirst) copy(this.#outputs, width + 1, this.#inputs, width, width / 2);
+    else this.#evaluateFirst();
   }
 
   #evaluateFirst(): void {
-    const acceleration = this.#inputs.subarray(this.#width);
-    this.#pair.first.evaluate(0, this.#inputs, acceleration, this.#force);
+    this.#pair.first.evaluate(0, this.#inputs, this.#first, this.#force);
+    copy(this.#first, 0, this.#inputs, this.#width, this.#width / 2);
     this.evaluations += countEvaluations(this.#pair.program.first);
   }
 
@@ -230,9 +226,4 @@ class VariableStepRun implements Trajectory {
       ...added.subarray(addedHalf),
     );
   }
-}
-
-function allFinite(values: Float64Array, count: number): boolean {
-  for (let k = 0; k < count; k += 1) if (!Number.isFinite(values[k])) return false;
-  return true;
 }

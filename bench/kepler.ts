@@ -36,7 +36,7 @@ export interface KeplerSpeed {
   readonly nsPerPropagation: number;
 }
 
-/** Rounds over the blocks: what else runs on the machine seldom meets the same block in all of them. */
+/** Rounds: what else runs on the machine seldom meets the same function in all of them. */
 const rounds = 5;
 /** Points a block of the grid. */
 const blockSize = 128;
@@ -113,6 +113,18 @@ async function leastTimes(functions: readonly (() => void)[], milliseconds: numb
   });
 }
 
+/** The same over several rounds in turn, with so many milliseconds for each function in all. */
+async function leastOfRounds(functions: readonly (() => void)[], milliseconds: number): Promise<number[]> {
+  const least = functions.map(() => Number.POSITIVE_INFINITY);
+  for (let round = 0; round < rounds; round++) {
+    const times = await leastTimes(functions, milliseconds / rounds);
+    times.forEach((time, k) => {
+      least[k] = Math.min(least[k]!, time);
+    });
+  }
+  return least;
+}
+
 /** Largest error in ulp of E against the solution in double-double. */
 function worstUlps(points: Block, solve: (e: number, mean: number) => number): number {
   let worst = 0;
@@ -166,18 +178,14 @@ export async function keplerBench(seconds = 8): Promise<KeplerSpeed> {
   // Both are met with every kind of point before they are timed.
   solveAll(grid, solveKepler, out)();
   solveAll(grid, newton, out)();
-  const [own, plain] = (await leastTimes(
+  const [own, plain] = (await leastOfRounds(
     [solveAll(grid, solveKepler, out), solveAll(grid, newton, out)],
     share,
   )) as [number, number];
-  const blockRuns = blocks.map((points) => solveAll(points, solveKepler, out));
-  const blockTimes = blocks.map(() => Number.POSITIVE_INFINITY);
-  for (let round = 0; round < rounds; round++) {
-    const times = await leastTimes(blockRuns, share / blocks.length / rounds);
-    times.forEach((time, k) => {
-      blockTimes[k] = Math.min(blockTimes[k]!, time);
-    });
-  }
+  const blockTimes = await leastOfRounds(
+    blocks.map((points) => solveAll(points, solveKepler, out)),
+    share / blocks.length,
+  );
   const slowest = blockTimes.indexOf(Math.max(...blockTimes));
   const nsPerSolution = own / grid.e.length;
   const start = { position: [1, 0, 0.1], velocity: [0, 1.3, 0.2] };

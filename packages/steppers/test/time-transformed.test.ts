@@ -1,5 +1,8 @@
 import { describe, expect, it } from "vitest";
-import { distance, exactState, periapsis, stepper } from "./support/runs.ts";
+import { arcs } from "./support/exact-arc.ts";
+import { evaluateExactly, force, pairs } from "./support/interpret-double-double.ts";
+import { stateError } from "./support/observed-order.ts";
+import { distance, exactState, periapsis, programStepper, stepper } from "./support/runs.ts";
 
 describe("logarithmic leapfrog (Mikkola & Tanikawa 1999; closed form derived and computed to 40 digits)", () => {
   it.each([0.1, 0.6, 0.9])("e = %d: on the exact ellipse, eccentric anomaly by 2 atan(s/2) a step", (e) => {
@@ -34,6 +37,26 @@ describe("logarithmic leapfrog (Mikkola & Tanikawa 1999; closed form derived and
       expect(Math.abs(lag / ((s * s) / 12) - 1)).toBeLessThan(1e-3);
     }
   });
+});
+
+it("logarithmic leapfrog goes back over its own steps, time included, in double-double arithmetic", () => {
+  const { step, start } = programStepper("logarithmic-leapfrog").program({
+    dimension: 2,
+    summation: "plain",
+    force,
+  });
+  let now = pairs(step.inputs);
+  let next = pairs(step.inputs);
+  evaluateExactly(start, [0.25, 0], arcs[1]!.start, now);
+  const began = now.hi.slice();
+  for (const h of [0.25, 0.25, 0.25, -0.25, -0.25, -0.25]) {
+    evaluateExactly(step, [h, 0], now, next);
+    [now, next] = [next, now];
+  }
+  now.hi.forEach((value, k) => {
+    expect(Math.abs(value - began[k]!)).toBeLessThan(1e-28);
+  });
+  expect(stateError(now, arcs[1]!.start)).toBeLessThan(1e-28);
 });
 
 describe("Sundman steps", () => {

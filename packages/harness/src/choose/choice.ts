@@ -38,6 +38,7 @@ export interface RankedStepper {
   readonly stepper: string;
   readonly title: string;
   readonly symplectic: boolean;
+  /** Null for a variable step, and where equal steps of the method take unequal times. */
   readonly stepSeconds: number | null;
   /** Of the shortest orbit. */
   readonly stepsPerOrbit: number | null;
@@ -49,7 +50,7 @@ export interface RankedStepper {
   /** Smallest factor over the limits; below 1 fails. */
   readonly margin: number;
   readonly bindingLimit: string | null;
-  /** Knob values verified in full around the recommended one: step in seconds, or tolerance; `from` is the coarser end. */
+  /** Knob values verified in full around the recommended one: step in seconds, or tolerance, or steps per orbit of an uneven stepper; `from` is the coarser end. */
   readonly band: { readonly from: number; readonly to: number; readonly cellsRun: number } | null;
   /** The coarsest knob that still holds every limit (undivided), and the first that fails: how near the edge is. */
   readonly cliff: {

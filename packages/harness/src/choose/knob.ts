@@ -1,7 +1,7 @@
 import type { StepperInfo } from "@perigauge/steppers";
 import type { Scenario } from "../scenario/scenario.ts";
 import type { Cell } from "../score/score.ts";
-import { type Fleet, type FleetPoint, orbitsOf } from "./fleet.ts";
+import { corners, type Fleet, type FleetPoint, orbitsOf } from "./fleet.ts";
 
 /**
  * What is turned to make a stepper finer or coarser. One number, `fineness`, serves both kinds: steps per orbit of the shortest orbit for
@@ -45,12 +45,12 @@ export function knobOf(stepper: StepperInfo, scenario: Scenario, fleet: Fleet): 
 
 function stepKnob(stepper: StepperInfo, scenario: Scenario, fleet: Fleet): Knob {
   const period = fleet.shortestPeriodSeconds;
-  const grid = scenario.step?.multipleOfSeconds;
+  const grid = stepper.uneven ? undefined : scenario.step?.multipleOfSeconds;
   const onGrid = (seconds: number): number =>
     grid === undefined ? seconds : Math.max(1, Math.floor(seconds / grid + 1e-9)) * grid;
-  const longest = onGrid(
-    Math.min(scenario.step?.maxSeconds ?? Number.POSITIVE_INFINITY, period / FEWEST_STEPS),
-  );
+  const cap =
+    (scenario.step?.maxSeconds ?? Number.POSITIVE_INFINITY) / (stepper.uneven ? largestOverMean(fleet) : 1);
+  const longest = onGrid(Math.min(cap, period / FEWEST_STEPS));
   const coarsest = period / longest;
   const finest = grid === undefined ? MOST_STEPS : period / grid;
   const within = (fineness: number): number => Math.min(finest, Math.max(coarsest, fineness));
@@ -65,7 +65,6 @@ function stepKnob(stepper: StepperInfo, scenario: Scenario, fleet: Fleet): Knob 
         : Math.max(count + 1, Math.floor(wanted + 1e-9));
     return within(period / (Math.max(1, next) * grid));
   };
-  const knob = (stepSeconds: number, meanMotion: number): number => stepSeconds * meanMotion;
   return {
     kind: "step",
     coarsest,
@@ -78,7 +77,7 @@ function stepKnob(stepper: StepperInfo, scenario: Scenario, fleet: Fleet): Knob 
       stepper: stepper.id,
       eccentricity: point.eccentricity,
       // The step in seconds comes first; it is rounded once to normalised units.
-      step: knob(secondsOf(period, fineness, grid), point.meanMotion),
+      step: secondsOf(period, fineness, grid) * point.meanMotion,
       orbits: orbitsOf(point, seconds),
       startAnomalyDeg,
       summation: "plain",
@@ -90,11 +89,17 @@ function stepKnob(stepper: StepperInfo, scenario: Scenario, fleet: Fleet): Knob 
       return [...near].filter((n) => n >= FEWEST_STEPS).map((n) => ({ ...cell, step: TWO_PI / n }));
     },
     physical: (fineness) => ({
-      stepSeconds: secondsOf(period, fineness, grid),
+      // Uneven steps have no one length in seconds: steps per orbit say all there is.
+      stepSeconds: stepper.uneven ? null : secondsOf(period, fineness, grid),
       stepsPerOrbit: fineness,
       tolerance: null,
     }),
   };
+}
+
+/** Largest step over the mean one where steps are proportional to the radius: 1 + e at apoapsis. */
+function largestOverMean(fleet: Fleet): number {
+  return 1 + Math.max(...corners(fleet).map(({ eccentricity }) => eccentricity));
 }
 
 /** Seconds of a fineness; on a grid the multiple itself, free of the rounding of the division. */

@@ -37,8 +37,8 @@ export function rankedRun(
     errors,
     ...margin(errors),
     band: {
-      from: (at.stepSeconds ?? at.tolerance) as number,
-      to: (finest.stepSeconds ?? finest.tolerance) as number,
+      from: (at.stepSeconds ?? at.tolerance ?? at.stepsPerOrbit) as number,
+      to: (finest.stepSeconds ?? finest.tolerance ?? finest.stepsPerOrbit) as number,
       cellsRun: verified.cellsRun,
     },
     cliff: {
@@ -129,9 +129,10 @@ function describe(value: number): string {
 
 export function describeKnob(at: {
   readonly stepSeconds: number | null;
+  readonly stepsPerOrbit: number | null;
   readonly tolerance: number | null;
 }): string {
-  return at.stepSeconds === null
-    ? `tolerance ${at.tolerance}`
-    : `a step of ${Number(at.stepSeconds.toPrecision(4))} s`;
+  if (at.tolerance !== null) return `tolerance ${at.tolerance}`;
+  if (at.stepSeconds !== null) return `a step of ${Number(at.stepSeconds.toPrecision(4))} s`;
+  return `${threeDigits(at.stepsPerOrbit ?? 0)} uneven steps per orbit`;
 }

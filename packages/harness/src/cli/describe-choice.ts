@@ -61,21 +61,27 @@ function where(error: LimitError): string {
 }
 
 function knobText(entry: RankedStepper): string {
-  if (entry.stepSeconds === null) return `tolerance ${scientific(entry.tolerance)}`;
+  if (entry.tolerance !== null) return `tolerance ${scientific(entry.tolerance)}`;
+  if (entry.stepSeconds === null) return `${plain(entry.stepsPerOrbit ?? 0)} uneven steps per orbit`;
   return `a step of ${plain(entry.stepSeconds)} s (${plain(entry.stepsPerOrbit ?? 0)} steps per orbit)`;
 }
 
-function bandText({ band, stepSeconds }: RankedStepper): string {
+function bandText({ band, stepSeconds, tolerance }: RankedStepper): string {
   if (band === null) return "";
+  if (tolerance !== null) return `tolerances ${scientific(band.from)} to ${scientific(band.to)}`;
   return stepSeconds === null
-    ? `tolerances ${scientific(band.from)} to ${scientific(band.to)}`
+    ? `${plain(band.from)} to ${plain(band.to)} steps per orbit`
     : `steps of ${plain(band.from)} to ${plain(band.to)} s`;
 }
 
-function cliffText({ cliff }: RankedStepper): string {
+function cliffText({ cliff, stepsPerOrbit }: RankedStepper): string {
   if (cliff === null) return "";
   const knob =
-    cliff.stepSeconds === null ? `tolerance ${scientific(cliff.tolerance)}` : `${plain(cliff.stepSeconds)} s`;
+    cliff.tolerance !== null
+      ? `tolerance ${scientific(cliff.tolerance)}`
+      : cliff.stepSeconds !== null
+        ? `${plain(cliff.stepSeconds)} s`
+        : `${plain((stepsPerOrbit ?? 0) / cliff.ratio)} steps per orbit`;
   return cliff.reason === "capped"
     ? `The limits still hold at ${knob}, the coarsest the scenario allows: no cliff within reach.`
     : `The cliff: every limit still holds at ${knob} (${plain(cliff.ratio, 3)} times the recommendation) and one fails beyond it.`;
@@ -115,7 +121,11 @@ function rankingTable(ranking: readonly RankedStepper[]): string {
   const rows = ranking.map((entry, i) => [
     String(i + 1),
     entry.stepper,
-    entry.stepSeconds === null ? `tol ${scientific(entry.tolerance)}` : `${plain(entry.stepSeconds)} s`,
+    entry.tolerance !== null
+      ? `tol ${scientific(entry.tolerance)}`
+      : entry.stepSeconds === null
+        ? `${plain(entry.stepsPerOrbit ?? 0)} steps`
+        : `${plain(entry.stepSeconds)} s`,
     plain(entry.evaluationsPerOrbit),
     entry.evaluationsTotal.toExponential(3).replace("e+", "e"),
     plain(entry.margin, 3),

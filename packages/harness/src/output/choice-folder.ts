@@ -4,6 +4,7 @@ import type { Reading } from "../choose/measure.ts";
 import { InvalidInputError } from "../errors.ts";
 import type { ChoiceEvidence } from "../report/evidence.ts";
 import { writeReport } from "../report/write-report.ts";
+import { MEASURES, type MeasureName, type Score } from "../score/score.ts";
 import { scoresCsv } from "./scores-csv.ts";
 
 /**
@@ -54,7 +55,7 @@ export async function writeChoiceFolder(
     await writeFile(join(staging, "evidence.json"), `${JSON.stringify(evidence)}\n`);
     await writeFile(
       join(staging, "scores.ndjson"),
-      scores.map((score) => `${JSON.stringify(score)}\n`).join(""),
+      scores.map((score) => `${JSON.stringify(measuredOnly(score))}\n`).join(""),
     );
     await writeFile(join(staging, "scores.csv"), scoresCsv(scores));
     await writeReport(staging, evidence);
@@ -68,4 +69,13 @@ export async function writeChoiceFolder(
     throw error;
   }
   return directory;
+}
+
+/** A score without the measures that were not asked for: in a search most are not. */
+function measuredOnly(score: Score): object {
+  return Object.fromEntries(
+    Object.entries(score).filter(
+      ([name]) => !MEASURES.includes(name as MeasureName) || score[name as MeasureName].max !== null,
+    ),
+  );
 }

@@ -7,6 +7,7 @@ import type { ChoiceRun } from "../choose-stepper.ts";
 import { type FleetPoint, orbitsOf } from "../fleet.ts";
 import { describeKnob } from "../ranked.ts";
 import { scoreCommand } from "../reproduce.ts";
+import { stepOf } from "./step-of.ts";
 
 const POINTS = 200;
 const TWO_PI = 2 * Math.PI;
@@ -27,7 +28,10 @@ export function histories(run: ChoiceRun, steppers: readonly Stepper[]): History
     choice.ranking.find((entry) => entry.symplectic !== winner.symplectic) ?? rivalOfOtherKind(run, winner);
   const roles: {
     role: History["role"];
-    entry: Pick<RankedStepper, "stepper" | "title" | "symplectic" | "stepSeconds" | "tolerance">;
+    entry: Pick<
+      RankedStepper,
+      "stepper" | "title" | "symplectic" | "stepSeconds" | "stepsPerOrbit" | "tolerance"
+    >;
   }[] = [{ role: "choice", entry: winner }];
   if (rival !== undefined) roles.push({ role: "rival", entry: rival });
   if (choice.current !== null) roles.push({ role: "current", entry: choice.current });
@@ -35,9 +39,9 @@ export function histories(run: ChoiceRun, steppers: readonly Stepper[]): History
     const cell: Cell = {
       stepper: entry.stepper,
       eccentricity: point.eccentricity,
-      ...(entry.stepSeconds !== null
-        ? { step: entry.stepSeconds * point.meanMotion }
-        : { tolerance: entry.tolerance as number, ...maxStepOf(run, point) }),
+      ...(entry.tolerance !== null
+        ? { tolerance: entry.tolerance, ...maxStepOf(run, point) }
+        : { step: stepOf(entry, context.fleet.shortestPeriodSeconds, point) }),
       orbits: orbitsOf(point, context.measurer.durationSeconds),
       startAnomalyDeg: place.startAnomalyDeg,
       summation: "plain",
@@ -77,7 +81,9 @@ function maxStepOf({ context }: ChoiceRun, point: FleetPoint): { maxStep?: numbe
 function rivalOfOtherKind(
   { tried }: ChoiceRun,
   winner: RankedStepper,
-): Pick<RankedStepper, "stepper" | "title" | "symplectic" | "stepSeconds" | "tolerance"> | undefined {
+):
+  | Pick<RankedStepper, "stepper" | "title" | "symplectic" | "stepSeconds" | "stepsPerOrbit" | "tolerance">
+  | undefined {
   const others = tried
     .filter(({ candidate }) => candidate.stepper.symplectic !== winner.symplectic)
     .flatMap(({ candidate, screening }) =>
@@ -96,12 +102,13 @@ function rivalOfOtherKind(
   const perStep = stepper.evaluationsPerStep;
   const fineness =
     knob.kind === "step" && perStep !== null ? winner.evaluationsPerOrbit / perStep : best.fineness;
-  const { stepSeconds, tolerance } = knob.physical(Math.max(5, fineness));
+  const { stepSeconds, stepsPerOrbit, tolerance } = knob.physical(Math.max(5, fineness));
   return {
     stepper: stepper.id,
     title: stepper.title,
     symplectic: stepper.symplectic,
     stepSeconds,
+    stepsPerOrbit,
     tolerance,
   };
 }

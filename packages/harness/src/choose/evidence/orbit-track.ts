@@ -3,6 +3,7 @@ import type { Stepper } from "@perigauge/steppers";
 import type { OrbitTrack } from "../../report/evidence.ts";
 import type { ChoiceRun } from "../choose-stepper.ts";
 import { corners, type FleetPoint } from "../fleet.ts";
+import { stepOf } from "./step-of.ts";
 
 const EXACT_POINTS = 361;
 const MOST_STEPS = 4000;
@@ -23,8 +24,8 @@ export function orbitTrack({ choice, context }: ChoiceRun, steppers: readonly St
         : numericalPoints(
             point,
             stepper,
-            winner.stepSeconds,
             winner.tolerance,
+            stepOf(winner, context.fleet.shortestPeriodSeconds, point),
             context.scenario.step?.maxSeconds,
           ),
     stepper: winner?.stepper ?? "",
@@ -41,25 +42,24 @@ function exactPoints({ eccentricity, semiMajorAxisKm }: FleetPoint): OrbitTrack[
 function numericalPoints(
   { eccentricity, semiMajorAxisKm, meanMotion }: FleetPoint,
   stepper: Stepper,
-  stepSeconds: number | null,
   tolerance: number | null,
+  step: number,
   maxSeconds: number | undefined,
 ): OrbitTrack["numerical"] {
   const { x, y, vx, vy } = stateAtTrueAnomalyDegrees(eccentricity, 0);
   const state = Float64Array.of(x, y, vx, vy);
   const period = orbitThrough({ x, y, vx, vy }).period;
-  const step = (stepSeconds ?? 0) * meanMotion;
   const trajectory =
-    stepSeconds === null
+    tolerance !== null
       ? stepper.begin({
           state,
           step: 0,
-          tolerance: tolerance as number,
+          tolerance,
           endTime: [period.hi, period.lo],
           ...(maxSeconds === undefined ? {} : { maxStep: maxSeconds * meanMotion }),
         })
       : stepper.begin({ state, step });
-  const wanted = stepSeconds === null ? MOST_STEPS : Math.min(MOST_STEPS, Math.floor(period.hi / step));
+  const wanted = tolerance !== null ? MOST_STEPS : Math.min(MOST_STEPS, Math.floor(period.hi / step));
   const rows = new Float64Array(4 * wanted);
   const made = trajectory.advance(wanted, rows, new Float64Array(2 * wanted));
   return Array.from({ length: made }, (_, i) => ({

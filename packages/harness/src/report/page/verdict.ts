@@ -22,9 +22,11 @@ ${chosen === null ? noneQualifies(choice) : recommendation(choice, chosen)}
 function recommendation(choice: Choice, chosen: RankedStepper): Markup {
   const binding = chosen.bindingLimit === null ? undefined : chosen.errors[chosen.bindingLimit];
   const knob =
-    chosen.stepSeconds === null
+    chosen.tolerance !== null
       ? html`tolerance <b>${formatNumber(chosen.tolerance)}</b>`
-      : html`a step of <b>${knobWords(chosen)}</b>`;
+      : chosen.stepSeconds !== null
+        ? html`a step of <b>${knobWords(chosen)}</b>`
+        : html`<b>${knobWords(chosen)}</b>`;
   return html`<h1>Use <b>${wholeWords(chosen.stepper)}</b> with ${knob}</h1>
 <p class="lead">${
     binding === undefined || chosen.bindingLimit === null
@@ -54,19 +56,24 @@ function noneQualifies(choice: Choice): Markup {
   }</ul>`;
 }
 
-function bandWords({ band, stepSeconds }: RankedStepper): string {
+function bandWords({ band, stepSeconds, tolerance }: RankedStepper): string {
   if (band === null) return "";
   const range =
-    stepSeconds === null
+    tolerance !== null
       ? `tolerances ${formatNumber(band.from)} to ${formatNumber(band.to)}`
-      : `steps of ${formatNumber(band.from, 5)} to ${formatNumber(band.to, 5)} s`;
+      : stepSeconds === null
+        ? `${formatNumber(band.from, 4)} to ${formatNumber(band.to, 4)} steps per orbit`
+        : `steps of ${formatNumber(band.from, 5)} to ${formatNumber(band.to, 5)} s`;
   return `Verified in full over ${range}, with ${plural(band.cellsRun, "run")}.`;
 }
 
 /** How near the step is to the first failure. */
-export function edgeWords({ cliff }: RankedStepper): string {
+export function edgeWords({ cliff, stepsPerOrbit }: RankedStepper): string {
   if (cliff === null || cliff.reason === "not searched") return "";
-  const knob = knobWords(cliff);
+  const knob = knobWords({
+    ...cliff,
+    stepsPerOrbit: stepsPerOrbit === null ? null : stepsPerOrbit / cliff.ratio,
+  });
   return cliff.reason === "capped"
     ? `Every limit still holds at ${knob}, the coarsest that was allowed.`
     : `Every limit still holds at ${knob}, ${formatTimes(cliff.ratio)} times the recommendation, and one breaks beyond.`;

@@ -42,13 +42,15 @@ export function durationWords(scenario: Scenario): string {
     : `${formatCount(scenario.duration.orbits)} orbits`;
 }
 
-/** The knob of a stepper: its step in seconds, or its tolerance. */
+/** The knob of a stepper: its step in seconds, its tolerance, or steps per orbit where equal steps take unequal times. */
 export function knobWords(knob: {
   readonly stepSeconds: number | null;
+  readonly stepsPerOrbit: number | null;
   readonly tolerance: number | null;
 }): string {
   if (knob.stepSeconds !== null) return withUnit(formatNumber(knob.stepSeconds, 5), "s");
-  return knob.tolerance === null ? "–" : `tolerance ${formatNumber(knob.tolerance)}`;
+  if (knob.tolerance !== null) return `tolerance ${formatNumber(knob.tolerance)}`;
+  return knob.stepsPerOrbit === null ? "–" : `${formatNumber(knob.stepsPerOrbit, 4)} uneven steps per orbit`;
 }
 
 export function plural(count: number, one: string, many = `${one}s`): string {

@@ -5,7 +5,9 @@ export const FONT = "DejaVu Sans, Verdana, Geneva, sans-serif";
 
 /** One look for every chart, written into each specification so that it draws alike anywhere. */
 export const chartConfig: Config = {
+  // The drawing as a whole has a title and a description; thousands of marks with roles of their own help nobody.
   aria: false,
+  mark: { aria: false },
   background: colour("paper"),
   font: FONT,
   padding: { left: 8, right: 14, top: 8, bottom: 8 },

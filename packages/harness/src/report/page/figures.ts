@@ -33,7 +33,7 @@ export function figures(charts: readonly Chart[], drawingOf: (name: string) => M
 function figure(chart: Chart, drawing: Markup): Markup {
   const id = `chart-${chart.name}`;
   return html`<figure id="${id}"><h4 id="${id}-title">${wholeWords(chart.title)}</h4>
-<div class="drawing" role="img" aria-labelledby="${id}-title" aria-describedby="${id}-text" data-chart="${chart.name}">${drawing}</div>
+<div class="drawing" role="img" aria-labelledby="${id}-title" aria-describedby="${id}-text" data-chart="${chart.name}"><div aria-hidden="true">${drawing}</div></div>
 <figcaption id="${id}-text">${chart.description} ${chart.note}</figcaption></figure>
 `;
 }

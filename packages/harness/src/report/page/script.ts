@@ -99,6 +99,7 @@ export const pageScript: string = String.raw`
     view.initialize(place).width(drawing.clientWidth);
     await view.runAsync();
     for (const attribute of ["role", "aria-roledescription", "aria-label"]) place.removeAttribute(attribute);
+    place.setAttribute("aria-hidden", "true");
     drawing.replaceChildren(place);
     drawing.dataset.live = "";
     views.push({ view, pickable: spec.data.some((table) => table.name === "picked_store") });

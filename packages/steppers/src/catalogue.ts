@@ -1,19 +1,11 @@
-import {
-  fromAdams,
-  fromComposition,
-  fromExtrapolation,
-  fromGauss,
-  fromGaussJackson,
-  fromHermite,
-  fromLogarithmicLeapfrog,
-  fromNystrom,
-  fromNystromPair,
-  fromPair,
-  fromRadau,
-  fromSplitting,
-  fromSundman,
-  fromTableau,
-} from "./build/stepper-of.ts";
+import { fromGauss, fromRadau } from "./family/collocation.ts";
+import { fromExtrapolation } from "./family/extrapolation.ts";
+import { fromHermite } from "./family/hermite.ts";
+import { fromAdams, fromGaussJackson } from "./family/multistep.ts";
+import { fromNystrom, fromNystromPair } from "./family/nystrom.ts";
+import { fromPair, fromTableau } from "./family/runge-kutta.ts";
+import { fromComposition, fromSplitting } from "./family/splitting.ts";
+import { fromLogarithmicLeapfrog, fromSundman } from "./family/time-transformed.ts";
 import { gaussLegendre } from "./methods/collocation/gauss-legendre.ts";
 import { gaussRadau15 } from "./methods/collocation/gauss-radau-15.ts";
 import { hermite4 } from "./methods/hermite/hermite-4.ts";

@@ -1,6 +1,13 @@
 import { describe, expect, it } from "vitest";
-import { catalogue, findStepper, InvalidInputError } from "../src/index.ts";
-import { periapsis, stepper } from "./support/runs.ts";
+import {
+  catalogue,
+  countEvaluations,
+  countFlops,
+  findStepper,
+  InvalidInputError,
+  pointMass,
+} from "../src/index.ts";
+import { periapsis, programStepper, stepper } from "./support/runs.ts";
 
 describe("catalogue", () => {
   it("has every id once, with title, source and a known family", () => {
@@ -99,6 +106,12 @@ describe("evaluations per step, counted from the program, are the published ones
   it("verner-6-1978 needs seven of its eight stages at fixed step: the last serves the error estimate", () => {
     expect(stepper("verner-6-1978").evaluationsPerStep).toBe(7);
   });
+});
+
+it("operations of a planar leapfrog step: three times two additions and products, and eight for the force", () => {
+  const { step } = programStepper("leapfrog").program({ dimension: 2, summation: "plain", force: pointMass });
+  expect(countFlops(step)).toBe(3 * 4 + 8);
+  expect(countEvaluations(step)).toBe(1);
 });
 
 describe("wrong use of a fixed step", () => {

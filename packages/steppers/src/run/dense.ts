@@ -20,6 +20,12 @@ export interface Dense {
   readonly stages: ((setting: Setting) => Program) | null;
 }
 
+/** Ends of a step as they may look after rounding. */
+const margin = 1e-12;
+
+/** Whether theta lies in a step, rounding of the time allowed for. */
+export const insideStep = (theta: number): boolean => theta >= -margin && theta <= 1 + margin;
+
 type Rows = readonly (readonly number[])[];
 
 /**

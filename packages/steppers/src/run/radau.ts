@@ -6,7 +6,7 @@ import type { Start, Trajectory } from "../stepper.ts";
 import { checkAdvance } from "./begin.ts";
 import { power64 } from "./controller.ts";
 import { allFinite, copy } from "./copy.ts";
-import { type Interpolate, nystromInterpolant } from "./dense.ts";
+import { type Interpolate, insideStep, nystromInterpolant } from "./dense.ts";
 import { advanceTime, type Time, timeUntil } from "./double-double.ts";
 import { firstStep } from "./first-step.ts";
 import type { CompiledCollocation } from "./implicit.ts";
@@ -96,7 +96,7 @@ export class RadauRun implements Trajectory {
 
   interpolate(timeHi: number, timeLo: number, out: Float64Array): void {
     const theta = timeUntil(this.#timeBefore, timeHi, timeLo) / this.#lastStep;
-    if (!(theta >= 0 && theta <= 1)) throw invalid.interpolationTime(timeHi);
+    if (!insideStep(theta)) throw invalid.interpolationTime(timeHi);
     this.#interpolant(theta, this.#lastStep, this.#before, this.#lastNodes, out);
   }
 

@@ -10,7 +10,7 @@ import type { Start, Stepper, Trajectory } from "../stepper.ts";
 import { checkAdvance, dimensionOf } from "./begin.ts";
 import { type Controller, makeController } from "./controller.ts";
 import { allFinite, copy } from "./copy.ts";
-import type { Dense } from "./dense.ts";
+import { type Dense, insideStep } from "./dense.ts";
 import { advanceTime, type Time, timeUntil } from "./double-double.ts";
 import { firstStep } from "./first-step.ts";
 import type { Claims } from "./fixed-step.ts";
@@ -199,7 +199,7 @@ class VariableStepRun implements Trajectory {
   #interpolate(dense: Dense, hi: number, lo: number, out: Float64Array): void {
     const since = timeUntil(this.#timeBefore, hi, lo);
     const theta = since / this.#lastStep;
-    if (!(theta >= 0 && theta <= 1)) throw invalid.interpolationTime(hi);
+    if (!insideStep(theta)) throw invalid.interpolationTime(hi);
     this.#slopes ??= this.#denseSlopes();
     dense.interpolate(theta, this.#lastStep, this.#before, this.#slopes, out);
   }

@@ -37,7 +37,8 @@ describe.each(["leapfrog", "velocity-verlet"] as const)("%s on an eccentric orbi
     const period = richardson((steps) => (run(steps).period.final as number) / h(steps) ** 2, n);
     expect(Math.abs(period / periodFrom[id](e) - 1)).toBeLessThan(tolerance);
     // Periapsis to apoapsis; energy is scored relative to |E0| = 1/2.
-    const half = (steps: number) => score({ stepper: id, eccentricity: e, stepsPerOrbit: steps, orbits: 0.5 });
+    const half = (steps: number) =>
+      score({ stepper: id, eccentricity: e, stepsPerOrbit: steps, orbits: 0.5 });
     const span = richardson((steps) => (half(steps).energy.final as number) / 2 / h(steps) ** 2, n);
     expect(Math.abs(span / energySpan[id](e) - 1)).toBeLessThan(tolerance);
   });

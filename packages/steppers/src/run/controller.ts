@@ -11,17 +11,30 @@ export interface Controller {
   rejected(error: number): number;
 }
 
-const safety = 0.9;
-const smallestFactor = 0.2;
-const largestFactor = 5;
+export const safety = 0.9;
+export const smallestFactor = 0.2;
+export const largestFactor = 5;
 /** A previous error far below the tolerance would otherwise hold the next step back. */
-const smallestPrevious = 1e-4;
+export const smallestPrevious = 1e-4;
+
+/** Exponents in 64ths: of the error and the one before it after an accepted step, of the error after a rejected one. */
+export interface Exponents {
+  readonly proportional: number;
+  readonly integral: number;
+  readonly plain: number;
+}
+
+export function exponentsOf(lowerOrder: number): Exponents {
+  const k = lowerOrder + 1;
+  return {
+    proportional: Math.max(1, Math.round((64 * 0.7) / k)),
+    integral: Math.max(1, Math.round((64 * 0.4) / k)),
+    plain: Math.max(1, Math.round(64 / k)),
+  };
+}
 
 export function makeController(lowerOrder: number): Controller {
-  const k = lowerOrder + 1;
-  const proportional = Math.max(1, Math.round((64 * 0.7) / k));
-  const integral = Math.max(1, Math.round((64 * 0.4) / k));
-  const plain = Math.max(1, Math.round(64 / k));
+  const { proportional, integral, plain } = exponentsOf(lowerOrder);
   let previous = smallestPrevious;
   return {
     accepted(error, afterRejection): number {

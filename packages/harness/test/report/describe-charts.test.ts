@@ -101,7 +101,28 @@ describe("titles follow the data", () => {
   });
 
   it("steps: doubling them divides a pure power law of order 5 by 32", () => {
-    expect(chart(inventedEvidence(), "phase-against-steps").title).toContain("by 32 (median)");
+    expect(chart(inventedEvidence(), "phase-against-steps").title).toContain(
+      "by 32 (median above the rounding floor)",
+    );
+  });
+
+  it("eccentricity: a stepper that took more evaluations is not compared at equal cost", () => {
+    const evidence = inventedEvidence();
+    const flatter = evidence.survey.againstEccentricity.map((point) =>
+      point.stepper === "leapfrog"
+        ? { ...point, phase: 1e-15, evaluationsPerOrbit: 3 * evidence.survey.evaluationsPerOrbit }
+        : point,
+    );
+    const survey = { ...evidence.survey, againstEccentricity: flatter };
+    const { title, description } = chart({ ...evidence, survey }, "phase-against-eccentricity");
+    expect(title).not.toContain("leapfrog");
+    expect(description).toContain("are left out of the finding");
+  });
+
+  it("duration: errors that stay level are said to", () => {
+    expect(chart(inventedEvidence(), "energy-over-time").title).toMatch(
+      /grows .*; it stays level for leapfrog$/,
+    );
   });
 
   it("duration: the day the track leaves its limit", () => {

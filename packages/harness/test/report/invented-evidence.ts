@@ -100,6 +100,29 @@ export function inventedEvidence(invention: Invention = {}): ChoiceEvidence {
           "position along the track: 2 km would have to become 6.1 km for dormand-prince-5 at 5 s",
           "or the budget of force evaluations per orbit would have to rise from 5 000 to 14 300",
         ],
+    explanation: "An invented paragraph on why this one wins.",
+    sensitivity: [
+      {
+        change: "as asked",
+        stepper: chosen?.stepper ?? null,
+        stepSeconds: 60,
+        stepsPerOrbit: 336.6,
+        tolerance: null,
+        evaluationsPerOrbit: 2020,
+        evidence: "extrapolated",
+      },
+      {
+        change: "limits 10 times tighter",
+        stepper: null,
+        stepSeconds: null,
+        stepsPerOrbit: null,
+        tolerance: null,
+        evaluationsPerOrbit: null,
+        evidence: "extrapolated",
+      },
+    ],
+    handOver: null,
+    bodies: null,
     cautions: [
       "rk4 at whole numbers of steps per orbit below 180 can resonate; the band was run at offsets.",
     ],
@@ -110,7 +133,7 @@ export function inventedEvidence(invention: Invention = {}): ChoiceEvidence {
       seed: 20240229,
       digest: "0123456789abcdef".repeat(4),
       cellsRun: 4321,
-      seconds: { screening: 3.2, search: 21.5, verification: 40.25, total: 66.1 },
+      seconds: { screening: 3.2, search: 21.5, verification: 40.25, sensitivity: 1.2, total: 66.1 },
     },
   };
   return {

@@ -3,7 +3,7 @@ import type { LogAxis } from "./log-axis.ts";
 /** A quantity on an axis: the row's field, its words with unit, and the axis it is drawn on. */
 export interface Quantity {
   readonly field: string;
-  readonly title: string;
+  readonly title: string | string[];
   readonly axis: LogAxis | LinearAxis;
 }
 
@@ -22,7 +22,7 @@ export function axisChannel(
   readonly field: string;
   readonly type: "quantitative";
   readonly scale: LogAxis["scale"] | LinearAxis["scale"];
-  readonly title: string;
+  readonly title: string | string[];
   readonly axis: {
     grid: boolean;
     tickCount?: number;

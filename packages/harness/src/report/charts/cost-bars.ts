@@ -7,6 +7,7 @@ import { durationWords, knobWords, plural } from "../text/words.ts";
 import { makeChart, type Row } from "./make-chart.ts";
 
 const MOST_BARS = 24;
+const WORDS_WIDTH = 118;
 
 /** What does each candidate cost that holds the limits? Force evaluations of the whole fleet and duration. */
 export function costBars(evidence: ChoiceEvidence): Chart | null {
@@ -35,7 +36,12 @@ export function costBars(evidence: ChoiceEvidence): Chart | null {
     title: null,
     axis: { labelLimit: 190, labelColor: colour("ink"), ticks: false, domain: false, labelPadding: 6 },
   };
-  const scale = { domain: [0, most * 1.3], nice: false };
+  // Room for the words after the longest bar, in pixels: the page draws the chart at any width.
+  const scale = {
+    nice: false,
+    domainMin: 0,
+    domainMax: { expr: `${most} * width / max(40, width - ${WORDS_WIDTH})` },
+  };
   const tooltip = [
     { field: "stepper", title: "stepper", type: "nominal" as const },
     { field: "knob", title: "step", type: "nominal" as const },
@@ -57,7 +63,7 @@ export function costBars(evidence: ChoiceEvidence): Chart | null {
     field: "evaluationsTotal",
     type: "quantitative" as const,
     scale,
-    title: `force evaluations, whole fleet and duration${unit.words}`,
+    title: ["force evaluations,", `whole fleet and duration${unit.words}`],
     axis: { tickCount: 4, labelExpr: `format(datum.value / ${unit.value}, '~g')`, grid: true },
   };
   const left = choice.ranking.length - bars.length;

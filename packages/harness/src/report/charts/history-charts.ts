@@ -6,6 +6,7 @@ import { colour } from "../look/palette.ts";
 import type { Looks } from "../look/stepper-look.ts";
 import { formatNumber, formatTimes } from "../text/number.ts";
 import { dayWords, durationWords, listWords } from "../text/words.ts";
+import { HOVER_MARKS } from "./hover-marks.ts";
 import { type Layer, makeChart, type Row } from "./make-chart.ts";
 
 interface Measure {
@@ -134,7 +135,9 @@ function lines(
     },
     {
       transform: [{ filter: drawable }],
-      mark: { type: "circle", size: 16, opacity: 1 },
+      // Seen by the pointer only: drawn, they would hide the dashes.
+      name: HOVER_MARKS,
+      mark: { type: "circle", size: 60, opacity: 0 },
       encoding: {
         ...channels,
         tooltip: [
@@ -209,15 +212,29 @@ function labelsOf(histories: readonly History[]): string[] {
   });
 }
 
+/** Between these ratios of end to start an error counts as level. */
+const LEVEL = [0.8, 1.25] as const;
+
 function growthFinding(evidence: ChoiceEvidence, measure: Measure): string {
-  const parts = evidence.histories.flatMap((history) => {
-    const drawn = history.points.filter((point) => point[measure.field] > 0);
+  const grows: string[] = [];
+  const falls: string[] = [];
+  const level: string[] = [];
+  for (const { points, stepper } of evidence.histories) {
+    const drawn = points.filter((point) => point[measure.field] > 0);
     const [first, last] = [drawn[0], drawn.at(-1)];
-    if (first === undefined || last === undefined || first === last) return [];
-    return [`${formatTimes(last[measure.field] / first[measure.field])} times for ${history.stepper}`];
-  });
+    if (first === undefined || last === undefined || first === last) continue;
+    const ratio = last[measure.field] / first[measure.field];
+    if (ratio >= LEVEL[0] && ratio <= LEVEL[1]) level.push(stepper);
+    else if (ratio > 1) grows.push(`${formatTimes(ratio)} times for ${stepper}`);
+    else falls.push(`${formatTimes(1 / ratio)} times for ${stepper}`);
+  }
+  const parts = [
+    ...(grows.length > 0 ? [`grows ${listWords(grows)}`] : []),
+    ...(falls.length > 0 ? [`falls ${listWords(falls)}`] : []),
+    ...(level.length > 0 ? [`stays level for ${listWords(level)}`] : []),
+  ];
   const from = evidence.histories[0]?.points[0]?.days ?? 0;
-  return `From day ${formatNumber(from, 2)} to the end the ${measure.words} grows ${listWords(parts)}`;
+  return `From day ${formatNumber(from, 2)} to the end the ${measure.words} ${parts.join("; it ")}`;
 }
 
 function trackFinding(evidence: ChoiceEvidence, measure: Measure): string {

@@ -37,8 +37,20 @@ export function makeChart(parts: ChartParts): Chart {
       height: parts.height,
       autosize: { type: "fit-x", contains: "padding" },
       config: chartConfig,
-      data: { values: parts.rows.map((row) => ({ ...row })) },
+      data: { values: parts.rows.map(rounded) },
       layer: [...parts.layers],
     },
   };
+}
+
+/** Seven digits are more than a chart or a tooltip shows; all of them stand in the result's own files. */
+const DIGITS = 7;
+
+function rounded(row: Row): Record<string, Row[string]> {
+  return Object.fromEntries(
+    Object.entries(row).map(([name, value]) => [
+      name,
+      typeof value === "number" ? Number(value.toPrecision(DIGITS)) : value,
+    ]),
+  );
 }

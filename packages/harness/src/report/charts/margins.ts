@@ -6,6 +6,7 @@ import type { ChoiceEvidence } from "../evidence.ts";
 import { colour } from "../look/palette.ts";
 import { formatNumber, formatTimes } from "../text/number.ts";
 import { limitValue, limitWords } from "../text/words.ts";
+import { wrapWords } from "../text/wrap.ts";
 import { type Layer, makeChart, type Row } from "./make-chart.ts";
 
 interface Subject {
@@ -14,6 +15,7 @@ interface Subject {
   readonly errors: LimitErrors;
 }
 
+const LABEL_CHARACTERS = 17;
 const SUBJECT_LOOKS = [
   { colour: colour("stepper0"), shape: "circle" },
   { colour: colour("stepper1"), shape: "square" },
@@ -31,6 +33,7 @@ export function margins(evidence: ChoiceEvidence): Chart | null {
       label: subject.label,
       stepper: subject.stepper,
       limit: limitWords(key),
+      lines: wrapWords(limitWords(key), LABEL_CHARACTERS).join("\n"),
       factor: factorOf(error),
       worst: limitValue(key, error.value),
       allowed: limitValue(key, error.limit),
@@ -41,16 +44,16 @@ export function margins(evidence: ChoiceEvidence): Chart | null {
   const factors = rows.map((row) => Number(row.factor));
   const x: Quantity = {
     field: "factor",
-    title: "limit over worst error (right of 1: the limit holds)",
+    title: ["limit over worst error;", "right of 1 the limit holds"],
     axis: logAxis([...factors, 1, designFactor], 0.15),
   };
   // What a logarithm cannot show stands at the edge: no error at all on the right, a run that diverged on the left.
   const [low, high] = x.axis.domain;
   const placed = rows.map((row) => ({ ...row, factor: Math.min(Math.max(Number(row.factor), low), high) }));
-  const limits = [...new Set(rows.map((row) => String(row.limit)))];
+  const limits = [...new Set(rows.map((row) => String(row.lines)))];
   const labels = subjects.map((subject) => subject.label);
   const y = {
-    field: "limit",
+    field: "lines",
     type: "nominal" as const,
     sort: limits,
     title: null,
@@ -60,7 +63,7 @@ export function margins(evidence: ChoiceEvidence): Chart | null {
       ticks: false,
       domain: false,
       grid: true,
-      labelExpr: "split(datum.label, ', ')",
+      labelExpr: "split(datum.label, '\\n')",
     },
   };
   const line = (value: number, words: string, dash: number[], align: "left" | "right"): Layer[] => [

@@ -1,6 +1,7 @@
 import { axisChannel, type Quantity } from "../axes/axis-channel.ts";
 import { colour } from "../look/palette.ts";
 import { type Looks, lookScales } from "../look/stepper-look.ts";
+import { MUTED_MARKS } from "./hover-marks.ts";
 import type { Layer } from "./make-chart.ts";
 
 export interface Tip {
@@ -11,9 +12,6 @@ export interface Tip {
 }
 
 const FADED = 0.1;
-
-/** The layer of grey marks: they only carry tooltips, so a drawing that has none does without. */
-export const MUTED_MARKS = "muted_marks";
 
 /**
  * Lines with marks, one per stepper. Rows carry `stepper`, `symplectic` and `ended`; those of muted steppers are drawn in grey behind (whole

@@ -53,7 +53,7 @@ export function againstEccentricity(evidence: ChoiceEvidence, looks: Looks): Cha
       title: eccentricityFinding(evidence, measure),
       description: `Largest ${measure.words} (vertical, logarithmic) against eccentricity, over ${plural(survey.orbits, "orbit")} from ${startWords(
         survey.startAnomalyDeg,
-      )}, each stepper at about ${formatCount(survey.evaluationsPerOrbit)} force evaluations per orbit. ${endWords(points, measure)}${divergedWords(points)}`,
+      )}, ${costWords(evidence)}. ${endWords(points, measure)}${divergedWords(points)}`,
       note: mutedNote(looks),
       height: 300,
       rows,
@@ -84,7 +84,9 @@ export function againstSteps(evidence: ChoiceEvidence, looks: Looks): Chart[] {
       description: `Largest ${measure.words} (vertical, logarithmic) against steps per orbit (horizontal, logarithmic) at eccentricity ${formatNumber(
         survey.eccentricity,
       )}, over ${plural(survey.orbits, "orbit")} from ${startWords(survey.startAnomalyDeg)}. A straight line is a power law; where it bends level, rounding takes over.${
-        omitted.size > 0 ? ` Not drawn, having no fixed number of steps: ${[...omitted].join(", ")}.` : ""
+        omitted.size > 0
+          ? ` Not drawn, having no fixed number of steps: ${omitted.size <= 4 ? [...omitted].join(", ") : plural(omitted.size, "variable-step stepper")}.`
+          : ""
       }${divergedWords(points)}`,
       note: mutedNote(looks),
       height: 300,
@@ -132,19 +134,24 @@ function linearAxis(values: readonly number[]): LinearAxis {
 }
 
 function eccentricityFinding(evidence: ChoiceEvidence, measure: Measure): string {
-  const points = evidence.survey.againstEccentricity.filter((point) => positive(point, measure));
-  const highest = Math.max(...points.map((point) => point.eccentricity));
-  const atHighest = points
-    .filter((point) => point.eccentricity === highest)
+  const points = evidence.survey.againstEccentricity.filter(
+    (point) => positive(point, measure) && atEqualCost(point, evidence.survey.evaluationsPerOrbit),
+  );
+  // Where the scenario is hardest, not where the chart ends.
+  const distance = (point: SurveyPoint): number =>
+    Math.abs(point.eccentricity - evidence.survey.eccentricity);
+  const nearest = [...points].sort((a, b) => distance(a) - distance(b))[0]?.eccentricity ?? 0;
+  const there = points
+    .filter((point) => point.eccentricity === nearest)
     .sort((a, b) => errorOf(a, measure) - errorOf(b, measure));
-  const best = atHighest[0];
+  const best = there[0];
   if (best === undefined) return `No run gave a ${measure.words}`;
-  const base = `At equal cost and e = ${formatNumber(highest)}, ${best.stepper} has the smallest ${measure.words}, ${formatNumber(errorOf(best, measure), 2)}${measure.unit}`;
-  const subject = atHighest.find((point) => point.stepper === evidence.choice.choice);
+  const base = `At equal cost and e = ${formatNumber(nearest)}, ${best.stepper} has the smallest ${measure.words}, ${formatNumber(errorOf(best, measure), 2)}${measure.unit}`;
+  const subject = there.find((point) => point.stepper === evidence.choice.choice);
   if (subject !== undefined && subject !== best) {
     return `${base}; ${subject.stepper} has ${formatTimes(errorOf(subject, measure) / errorOf(best, measure))} times as much`;
   }
-  const last = atHighest.at(-1);
+  const last = there.at(-1);
   return last === undefined || last === best
     ? base
     : `${base}; ${last.stepper} has the largest of those in orbit, ${formatNumber(errorOf(last, measure), 2)}${measure.unit}`;
@@ -155,16 +162,19 @@ function stepFinding(evidence: ChoiceEvidence, points: readonly SurveyPoint[], m
   const own = points
     .filter((point) => point.stepper === subject && positive(point, measure))
     .sort((a, b) => (stepsOf(a) ?? 0) - (stepsOf(b) ?? 0));
-  const factors = own.slice(1).map((finer, index) => {
+  // Pairs near the smallest error met say how rounding behaves, not the stepper.
+  const floor = 30 * Math.min(...own.map((point) => errorOf(point, measure)));
+  const factors = own.slice(1).flatMap((finer, index) => {
     const coarser = own[index] ?? finer;
-    const halvings = Math.log2((stepsOf(finer) ?? 1) / (stepsOf(coarser) ?? 1));
-    return (errorOf(coarser, measure) / errorOf(finer, measure)) ** (1 / halvings);
+    if (errorOf(finer, measure) < floor) return [];
+    const doublings = Math.log2((stepsOf(finer) ?? 1) / (stepsOf(coarser) ?? 1));
+    return [(errorOf(coarser, measure) / errorOf(finer, measure)) ** (1 / doublings)];
   });
   const middle = median(factors);
   if (middle === null)
     return `How the ${measure.words} falls as the step shrinks, at e = ${formatNumber(evidence.survey.eccentricity)}`;
   return middle >= 1
-    ? `At e = ${formatNumber(evidence.survey.eccentricity)}, twice as many steps divide the ${measure.words} of ${subject} by ${formatTimes(middle)} (median)`
+    ? `At e = ${formatNumber(evidence.survey.eccentricity)}, twice as many steps divide the ${measure.words} of ${subject} by ${formatTimes(middle)} (median above the rounding floor)`
     : `At e = ${formatNumber(evidence.survey.eccentricity)}, twice as many steps do not lessen the ${measure.words} of ${subject} (median factor ${formatNumber(1 / middle, 2)})`;
 }
 
@@ -188,6 +198,23 @@ function divergedWords(points: readonly SurveyPoint[]): string {
   const named =
     steppers.length <= 4 ? `: ${steppers.join(", ")}` : ` of ${formatCount(steppers.length)} steppers`;
   return ` Crosses at the upper edge: ${plural(diverged.length, "run")} that did not stay in orbit${named}.`;
+}
+
+/** A comparison at equal cost takes steppers within a sixth of it; the others are drawn, not compared. */
+const SAME_COST = 1.17;
+
+function atEqualCost(point: SurveyPoint, evaluationsPerOrbit: number): boolean {
+  const ratio = point.evaluationsPerOrbit / evaluationsPerOrbit;
+  return ratio <= SAME_COST && ratio >= 1 / SAME_COST;
+}
+
+function costWords({ survey }: ChoiceEvidence): string {
+  const base = `each stepper at about ${formatCount(survey.evaluationsPerOrbit)} force evaluations per orbit`;
+  const others = survey.againstEccentricity
+    .filter((point) => point.ended === "completed" && !atEqualCost(point, survey.evaluationsPerOrbit))
+    .map((point) => point.evaluationsPerOrbit);
+  if (others.length === 0) return base;
+  return `${base}, but for variable-step ones and others that cannot be set to it, which took ${formatCount(Math.min(...others))} to ${formatCount(Math.max(...others))} and are left out of the finding`;
 }
 
 function startWords(startAnomalyDeg: number): string {

@@ -1,11 +1,13 @@
 import type { Spec } from "vega";
 import type { TopLevelSpec } from "vega-lite";
 import type { Chart, ChartSection } from "../chart.ts";
-import { MUTED_MARKS } from "../charts/series-layers.ts";
+import { HOVER_MARKS, MUTED_MARKS } from "../charts/hover-marks.ts";
+import type { Row } from "../charts/make-chart.ts";
 import { withColourVariables } from "../look/palette.ts";
-import { compileSpec } from "../render/to-svg.ts";
+import { compileSpec, withoutLayers } from "../render/to-svg.ts";
 import { html, type Markup } from "../text/html.ts";
 import { wholeWords } from "../text/whole-words.ts";
+import { type PackedTable, packTable } from "./pack-table.ts";
 
 const SECTIONS: readonly {
   readonly section: ChartSection;
@@ -41,18 +43,18 @@ function figure(chart: Chart, drawing: Markup): Markup {
 /** What the page's script draws: compiled charts, whose data tables are pooled because several charts share one. */
 export interface PageCharts {
   readonly charts: readonly { readonly name: string; readonly spec: Spec }[];
-  readonly tables: readonly unknown[];
+  readonly tables: readonly PackedTable[];
 }
 
 export function pageCharts(charts: readonly Chart[]): PageCharts {
-  const tables: unknown[] = [];
+  const tables: PackedTable[] = [];
   const places = new Map<string, number>();
   const pooled = charts.map((chart) => {
     const spec = JSON.parse(withColourVariables(JSON.stringify(compileSpec(pageSpec(chart.spec))))) as Spec;
     for (const data of spec.data ?? []) {
       if (!("values" in data)) continue;
       const key = JSON.stringify(data.values);
-      const place = places.get(key) ?? tables.push(data.values) - 1;
+      const place = places.get(key) ?? tables.push(packTable(data.values as readonly Row[])) - 1;
       places.set(key, place);
       Object.assign(data, { values: place });
     }
@@ -72,7 +74,5 @@ export function pageSpec(spec: TopLevelSpec): TopLevelSpec {
 
 /** The same without the marks that only carry tooltips. */
 export function drawingSpec(spec: TopLevelSpec): TopLevelSpec {
-  const page = pageSpec(spec);
-  if (!("layer" in page)) return page;
-  return { ...page, layer: page.layer.filter((layer) => layer.name !== MUTED_MARKS) };
+  return withoutLayers(pageSpec(spec), [HOVER_MARKS, MUTED_MARKS]);
 }

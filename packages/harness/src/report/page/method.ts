@@ -14,7 +14,7 @@ export function method(evidence: ChoiceEvidence): Markup {
     scenario.orbits.length === 1 ? "the orbit" : `all ${formatCount(scenario.orbits.length)} orbits`
   } of the scenario, eccentricities sampled over their ranges with both ends, and ${startWords(scenario.start)}. The exact orbit is the one through the rounded start, carried in twice the working precision.</p>
 <p>A recommended step keeps every error below its limit divided by ${designFactor}, the design factor, over a whole band of finer steps and offsets from whole numbers of steps per orbit, run in full: one step that happens to hold proves nothing. The edge is the coarsest step at which the limits themselves still hold. Steppers are ranked by force evaluations, which do not depend on a machine: ${formatCount(provenance.cellsRun)} runs in all.</p>
-<p>The charts against eccentricity use runs of ${plural(survey.orbits, "orbit")} at about ${formatCount(survey.evaluationsPerOrbit)} force evaluations per orbit for each stepper; those against steps per orbit are at eccentricity ${formatNumber(survey.eccentricity)}. Phase is the polar angle in rad; energy is relative to its start; period is the time between periapsis passages relative to the exact one.</p></section>`;
+<p>The charts against eccentricity use runs of ${plural(survey.orbits, "orbit")} at about ${formatCount(survey.evaluationsPerOrbit)} force evaluations per orbit for each stepper that can be set to it; those against steps per orbit are at eccentricity ${formatNumber(survey.eccentricity)}. Phase is the polar angle in rad; energy is relative to its start; period is the time between periapsis passages relative to the exact one.</p></section>`;
 }
 
 function startWords(start: ChoiceEvidence["choice"]["scenario"]["start"]): string {

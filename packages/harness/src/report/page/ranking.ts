@@ -1,7 +1,7 @@
 import type { Choice, ExcludedStepper, RankedStepper } from "../../choose/choice.ts";
 import { html, type Markup } from "../text/html.ts";
 import { formatCount, formatNumber, formatTimes } from "../text/number.ts";
-import { knobWords, limitValue, limitWords } from "../text/words.ts";
+import { knobWords, limitUnit, limitValue, limitWords } from "../text/words.ts";
 import { type Column, table } from "./table.ts";
 import { chosenOf } from "./verdict.ts";
 
@@ -86,7 +86,8 @@ ${folded(rows.slice(FIRST_ROWS), "more excluded", (rest) => table("Steppers that
 
 function valueWords(entry: ExcludedStepper, value: number | null): string {
   if (value === null) return "–";
-  return entry.limit === null ? formatNumber(value) : limitValue(entry.limit, value);
+  if (entry.limit !== null && limitUnit(entry.limit) !== "") return limitValue(entry.limit, value);
+  return Number.isInteger(value) ? formatCount(value) : formatNumber(value);
 }
 
 function folded<Row>(

@@ -21,6 +21,13 @@ export const pageScript: string = String.raw`
     return String(Number(mantissa)).replace("-", "−") + " × 10" + raised(String(power));
   };
 
+  const unpack = ({ rows, columns, texts }) =>
+    Array.from({ length: rows }, (_, index) => {
+      const row = {};
+      for (const name in columns) row[name] = texts[name] ? texts[name][columns[name][index]] : columns[name][index];
+      return row;
+    });
+
   const fillTip = (value) => {
     const list = document.createElement("dl");
     for (const [name, text] of Object.entries(value)) {
@@ -93,7 +100,7 @@ export const pageScript: string = String.raw`
 
   const draw = async ({ name, spec }) => {
     const drawing = document.querySelector('[data-chart="' + name + '"]');
-    for (const table of spec.data) if (typeof table.values === "number") table.values = structuredClone(source.tables[table.values]);
+    for (const table of spec.data) if (typeof table.values === "number") table.values = unpack(source.tables[table.values]);
     const place = document.createElement("div");
     const view = new vega.View(vega.parse(spec), { renderer: "svg", hover: true, tooltip: showTip, logLevel: vega.Error });
     view.initialize(place).width(drawing.clientWidth);

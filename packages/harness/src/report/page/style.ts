@@ -42,6 +42,7 @@ th{font-weight:400}thead th{color:var(--soft);font-size:.85rem;vertical-align:bo
 tbody th{font-weight:700}
 .number{text-align:right;font-variant-numeric:tabular-nums}
 .title{display:block;font-weight:400;font-size:.86rem}
+td[data-heading^=binding]{min-width:10em}
 .rank{display:inline-block;min-width:1.5em;color:var(--soft);font-weight:400}
 .marked th,.marked td{background:color-mix(in srgb,var(--stepper0) 9%,transparent)}
 .marked th{box-shadow:inset 4px 0 var(--stepper0);padding-left:10px}

@@ -1,6 +1,7 @@
 import { parse, resetSVGDefIds, type Spec, View } from "vega";
 import { compile, type TopLevelSpec } from "vega-lite";
 import type { Chart } from "../chart.ts";
+import { HOVER_MARKS } from "../charts/hover-marks.ts";
 import { escapeText } from "../text/html.ts";
 import { useFontWidths } from "./text-widths.ts";
 
@@ -32,12 +33,18 @@ export function compileSpec(spec: TopLevelSpec): Spec {
 
 /** The chart as a drawing that stands alone, with its title and text alternative as the drawing's own. */
 export async function toSvg(chart: Chart): Promise<string> {
-  const svg = await drawSpec(compileSpec(chart.spec), chart.name);
+  const svg = await drawSpec(compileSpec(withoutLayers(chart.spec, [HOVER_MARKS])), chart.name);
   return svg.replace(
     /^<svg([^>]*)>/,
     (_, attributes: string) =>
       `<svg${attributes} role="img"><title>${escapeText(chart.title)}</title><desc>${escapeText(chart.description)}</desc>`,
   );
+}
+
+/** The specification without the layers of these names. */
+export function withoutLayers(spec: TopLevelSpec, names: readonly string[]): TopLevelSpec {
+  if (!("layer" in spec)) return spec;
+  return { ...spec, layer: spec.layer.filter(({ name }) => name === undefined || !names.includes(name)) };
 }
 
 /** Draw a compiled chart; ids inside start with `name`, so that several drawings fit on one page. The same input gives the same bytes. */

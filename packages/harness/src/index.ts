@@ -9,8 +9,10 @@ export { EXIT, runCommandLine } from "./cli/run-command-line.ts";
 // Cells and scores
 export { InvalidInputError } from "./errors.ts";
 // Report
+export type { Chart } from "./report/chart.ts";
 export { describeCharts } from "./report/describe-charts.ts";
 export type { ChoiceEvidence } from "./report/evidence.ts";
+export { toSvg } from "./report/render/to-svg.ts";
 export { writeReport } from "./report/write-report.ts";
 export { CellPool, type PoolOptions, type PoolPlan } from "./run/cell-pool.ts";
 export { type ExactOrbitKind, type ExactState, exactAtPeriods, exactAtSteps } from "./run/exact-states.ts";

@@ -81,6 +81,39 @@ export interface ExcludedStepper {
   readonly allowed: number | null;
 }
 
+/** What the engineer should see when repeating the choice on the production code, switched to a point mass. */
+export interface HandOver {
+  readonly days: number;
+  readonly orbits: number;
+  readonly orbit: string;
+  readonly eccentricity: number;
+  readonly startAnomalyDeg: number;
+  readonly stepSeconds: number;
+  /** Largest distance between runs with step h and h/2 at common times. */
+  readonly halfStepDifferenceKm: number;
+  /** Distance from the start after running forward and, with reversed velocities, back. */
+  readonly closureKm: number;
+}
+
+/** The cheapest stepper of a changed scenario, by screening. */
+export interface Sensitivity {
+  readonly change: string;
+  readonly stepper: string | null;
+  readonly stepSeconds: number | null;
+  readonly stepsPerOrbit: number | null;
+  readonly tolerance: number | null;
+  readonly evaluationsPerOrbit: number | null;
+  readonly evidence: "extrapolated";
+}
+
+/** Share of each body's motion about the barycentre in an error of the relative orbit. */
+export interface BodyErrors {
+  readonly massRatio: number;
+  /** Worst position-like error of each body, over that of the relative orbit: m2/(m1 + m2) for the heavier, m1/(m1 + m2) for the lighter. */
+  readonly heavierShare: number;
+  readonly lighterShare: number;
+}
+
 export interface Provenance {
   readonly version: string;
   readonly node: string;
@@ -93,6 +126,7 @@ export interface Provenance {
     readonly screening: number;
     readonly search: number;
     readonly verification: number;
+    readonly sensitivity: number;
     readonly total: number;
   };
 }
@@ -106,6 +140,11 @@ export interface Choice {
   readonly excluded: readonly ExcludedStepper[];
   /** What would have to give where nothing qualifies; empty otherwise. */
   readonly whatWouldHaveToGive: readonly string[];
+  /** In plain words: why this one, what limits it, what to watch for, what it does not show. */
+  readonly explanation: string;
+  readonly sensitivity: readonly Sensitivity[];
+  readonly handOver: HandOver | null;
+  readonly bodies: BodyErrors | null;
   readonly cautions: readonly string[];
   readonly provenance: Provenance;
 }

@@ -4,22 +4,25 @@ import type { Scenario } from "../scenario/scenario.ts";
 import { threeDigits } from "../text/numbers.ts";
 import { type Candidate, type ChoiceContext, makeCandidate } from "./candidate.ts";
 import { cautionsOf } from "./cautions.ts";
-import type { Choice, CurrentChoice, ExcludedStepper, RankedStepper } from "./choice.ts";
+import type { BodyErrors, Choice, CurrentChoice, ExcludedStepper, RankedStepper } from "./choice.ts";
 import { assessCurrent } from "./current.ts";
 import { digestOf } from "./digest.ts";
+import { explain } from "./explanation.ts";
 import { buildFleet } from "./fleet.ts";
+import { handOver } from "./hand-over.ts";
 import { limitsOf } from "./limits.ts";
 import { Measurer } from "./measure.ts";
 import { failedEntry, rankedRun, rankedScreening } from "./ranked.ts";
 import { unmetRequirement } from "./requirements.ts";
 import { type Screened, type Screening, screen } from "./screen.ts";
 import { type Found, findCliff, search } from "./search.ts";
+import { sensitivity } from "./sensitivity.ts";
 import { verify } from "./verify.ts";
 import { whatWouldHaveToGive } from "./what-would-have-to-give.ts";
 import { explainRanking } from "./why.ts";
 
 /** Phases of a choice, in order; reported as they begin. */
-export type Phase = "screening" | "search" | "verification" | "current";
+export type Phase = "screening" | "search" | "verification" | "current" | "sensitivity";
 
 export interface ChooseOptions {
   readonly pool: CellPool;
@@ -60,12 +63,12 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
   const { pool, now } = options;
   const began = now();
   const fleet = buildFleet(scenario);
-  const limits = limitsOf(scenario.limits);
+  const limits = limitsOf(scenario.limits, scenario.integrationShare);
   const measurer = new Measurer(pool, limits, fleet.durationSeconds);
   const designFactor = scenario.designFactor ?? 2;
   const context: ChoiceContext = { scenario, fleet, measurer, designFactor, seed: options.seed };
   const excluded: ExcludedStepper[] = [];
-  const seconds = { screening: 0, search: 0, verification: 0 };
+  const seconds = { screening: 0, search: 0, verification: 0, sensitivity: 0 };
   const timed = async <T>(phase: keyof typeof seconds, work: () => Promise<T>): Promise<T> => {
     const from = now();
     const result = await work();
@@ -154,6 +157,9 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
     current = await timed("verification", () => assessCurrent(context, stepper as Stepper, winner));
   }
 
+  const winnerStepper = options.steppers.find(({ id }) => id === winner?.stepper);
+  options.onPhase?.("sensitivity", "");
+  const changes = await timed("sensitivity", () => sensitivity(context, tried));
   const body = {
     format: "perigauge-choice/1",
     scenario,
@@ -162,6 +168,11 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
     current,
     excluded,
     whatWouldHaveToGive: winner === null ? whatWouldHaveToGive(context, tried, excluded) : [],
+    explanation: explain(context, winner, explained),
+    sensitivity: changes,
+    handOver:
+      winner === null || winnerStepper === undefined ? null : handOver(context, winnerStepper, winner),
+    bodies: bodiesOf(scenario),
     cautions: cautionsOf(context, winner, explained),
   } as const;
   const choice: Choice = {
@@ -177,6 +188,12 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
     },
   };
   return { choice, context, tried };
+}
+
+/** Each body's share of a relative error, from the mass ratio, where the scenario gives one. */
+function bodiesOf({ massRatio }: Scenario): BodyErrors | null {
+  if (massRatio === undefined) return null;
+  return { massRatio, heavierShare: massRatio / (1 + massRatio), lighterShare: 1 / (1 + massRatio) };
 }
 
 /** What was run in full ranks before what was only screened. */

@@ -25,7 +25,7 @@ export async function assessCurrent(
   );
   const errors = limitErrors(context.measurer.limits, readings);
   const held = margin(errors);
-  const evaluationsTotal = fleetEvaluations(context, readings);
+  const evaluationsTotal = fleetEvaluations(context, stepper, readings);
   const enough = held.margin >= 1;
   const at = candidate.knob.physical(fineness);
   const factor = enough

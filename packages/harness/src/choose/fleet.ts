@@ -30,11 +30,12 @@ export interface Fleet {
 
 const SECONDS_PER_DAY = 86400;
 
-export function buildFleet(scenario: Scenario): Fleet {
+/** `eccentricityStep` is added to every eccentricity, at the same semi-major axis: for asking what if. */
+export function buildFleet(scenario: Scenario, eccentricityStep = 0): Fleet {
   const orbits = scenario.orbits.map((orbit, i) => ({
     name: orbit.name,
     count: orbit.count ?? 1,
-    sampler: orbitSampler(orbit, `scenario.orbits[${i}]`, scenario.bodyRadiusKm),
+    sampler: shifted(orbitSampler(orbit, `scenario.orbits[${i}]`, scenario.bodyRadiusKm), eccentricityStep),
   }));
   const { gravitationalParameterKm3S2 } = scenario;
   const draft: Fleet = { gravitationalParameterKm3S2, orbits, durationSeconds: 0, shortestPeriodSeconds: 0 };
@@ -44,6 +45,17 @@ export function buildFleet(scenario: Scenario): Fleet {
       ? scenario.duration.days * SECONDS_PER_DAY
       : scenario.duration.orbits * shortestPeriodSeconds;
   return { ...draft, durationSeconds, shortestPeriodSeconds };
+}
+
+function shifted(sampler: OrbitSampler, eccentricityStep: number): OrbitSampler {
+  if (eccentricityStep === 0) return sampler;
+  return {
+    ...sampler,
+    at: (first, second) => {
+      const { semiMajorAxisKm, eccentricity } = sampler.at(first, second);
+      return { semiMajorAxisKm, eccentricity: eccentricity + eccentricityStep };
+    },
+  };
 }
 
 export function pointAt(fleet: Fleet, orbitIndex: number, first: number, second: number): FleetPoint {

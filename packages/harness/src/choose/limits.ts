@@ -33,14 +33,15 @@ const PHYSICAL: Readonly<
   energyRelative: { measure: "energy", convert: (max) => max },
 };
 
-export function limitsOf(limits: readonly ScenarioLimit[]): Limit[] {
+/** The limits as held against runs: each reduced to the share of it that integration may use. */
+export function limitsOf(limits: readonly ScenarioLimit[], integrationShare = 1): Limit[] {
   return limits.map((entry) => {
     const key = LIMIT_KEYS.find((name) => entry[name] !== undefined) as LimitKey;
     const withinDays = entry.withinDays ?? null;
     return {
       id: withinDays === null ? key : `${key}@${withinDays}`,
       key,
-      limit: entry[key] as number,
+      limit: (entry[key] as number) * integrationShare,
       withinDays,
     };
   });

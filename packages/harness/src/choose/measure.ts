@@ -27,11 +27,23 @@ export class Measurer {
   readonly durationSeconds: number;
   private readonly pool: CellPool;
   private readonly known = new Map<string, Reading>();
+  private readonly scores: Map<string, Score>;
 
-  constructor(pool: CellPool, limits: readonly Limit[], durationSeconds: number) {
+  constructor(
+    pool: CellPool,
+    limits: readonly Limit[],
+    durationSeconds: number,
+    scores = new Map<string, Score>(),
+  ) {
     this.pool = pool;
     this.limits = limits;
     this.durationSeconds = durationSeconds;
+    this.scores = scores;
+  }
+
+  /** The same runs held against other limits of the same measures, or carried on to another duration. */
+  withLimits(limits: readonly Limit[], durationSeconds: number): Measurer {
+    return new Measurer(this.pool, limits, durationSeconds, this.scores);
   }
 
   /** Every run so far, in the order it was first asked for. */
@@ -56,14 +68,16 @@ export class Measurer {
       const sorted = [...horizons].filter((orbits) => orbits < cell.orbits).sort((a, b) => a - b);
       fresh.set(key, { sample, cell, job: { cell, horizons: sorted } });
     });
-    const jobs = [...fresh.values()];
-    const scores = await this.pool.run(
-      jobs.map(({ job }) => job),
-      { measures: measuresOf(this.limits), summaries: "maxima" },
-    );
-    [...fresh.entries()].forEach(([key, { sample, cell }], i) => {
-      this.known.set(key, this.read(sample, cell, scores[i] as Score));
+    const jobs = [...fresh.values()]
+      .map(({ job }) => job)
+      .filter((job) => !this.scores.has(JSON.stringify(job)));
+    const scores = await this.pool.run(jobs, { measures: measuresOf(this.limits), summaries: "maxima" });
+    jobs.forEach((job, i) => {
+      this.scores.set(JSON.stringify(job), scores[i] as Score);
     });
+    for (const [key, { sample, cell, job }] of fresh) {
+      this.known.set(key, this.read(sample, cell, this.scores.get(JSON.stringify(job)) as Score));
+    }
     return keys.map((key) => this.known.get(key) as Reading);
   }
 

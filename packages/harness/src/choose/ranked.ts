@@ -1,3 +1,4 @@
+import type { StepperInfo } from "@perigauge/steppers";
 import { threeDigits } from "../text/numbers.ts";
 import type { Candidate, ChoiceContext } from "./candidate.ts";
 import type { ExcludedStepper, RankedStepper } from "./choice.ts";
@@ -8,12 +9,25 @@ import { evaluationsPerShortestOrbit, type Screened, type Screening } from "./sc
 import type { Cliff, Found } from "./search.ts";
 import type { Verified } from "./verify.ts";
 
-/** Evaluations of the whole fleet over the whole duration, one start each: of every orbit its costliest sampled run. */
-export function fleetEvaluations({ fleet }: ChoiceContext, readings: readonly Reading[]): number {
-  return fleet.orbits.reduce((total: number, orbit: FleetOrbit, index: number) => {
+/**
+ * Evaluations of the whole fleet over the whole duration: of every orbit its costliest sampled run, and for every satellite the
+ * evaluations of starting up again after each restart.
+ */
+export function fleetEvaluations(
+  context: ChoiceContext,
+  stepper: StepperInfo,
+  readings: readonly Reading[],
+): number {
+  const again = restartsOf(context) * (stepper.startEvaluations ?? 1);
+  return context.fleet.orbits.reduce((total: number, orbit: FleetOrbit, index: number) => {
     const own = readings.filter(({ sample }) => sample.point.orbitIndex === index);
-    return total + orbit.count * Math.max(...own.map(({ score }) => score.evaluations));
+    return total + orbit.count * (Math.max(...own.map(({ score }) => score.evaluations)) + again);
   }, 0);
+}
+
+/** Restarts of one satellite over the duration. */
+export function restartsOf({ fleet, scenario }: ChoiceContext): number {
+  return Math.floor(((scenario.restartsPerDay ?? 0) * fleet.durationSeconds) / 86400);
 }
 
 export function rankedRun(
@@ -33,7 +47,7 @@ export function rankedRun(
     symplectic: stepper.symplectic,
     ...at,
     evaluationsPerOrbit: evaluationsPerShortestOrbit(verified.at, context.fleet.shortestPeriodSeconds),
-    evaluationsTotal: fleetEvaluations(context, verified.at),
+    evaluationsTotal: fleetEvaluations(context, stepper, verified.at),
     errors,
     ...margin(errors),
     band: {
@@ -68,7 +82,10 @@ export function rankedScreening(
     symplectic: stepper.symplectic,
     ...knob.physical(estimate.fineness),
     evaluationsPerOrbit: estimate.evaluationsPerOrbit,
-    evaluationsTotal: Math.round(estimate.evaluationsPerOrbit * orbits * satellites),
+    evaluationsTotal: Math.round(
+      satellites *
+        (estimate.evaluationsPerOrbit * orbits + restartsOf(context) * (stepper.startEvaluations ?? 1)),
+    ),
     errors,
     ...margin(errors),
     band: null,

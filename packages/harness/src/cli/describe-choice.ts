@@ -1,5 +1,12 @@
 import { join } from "node:path";
-import type { Choice, CurrentChoice, LimitError, RankedStepper } from "../choose/choice.ts";
+import type {
+  BodyErrors,
+  Choice,
+  CurrentChoice,
+  HandOver,
+  LimitError,
+  RankedStepper,
+} from "../choose/choice.ts";
 import { plain, scientific } from "../text/numbers.ts";
 import { table } from "./table.ts";
 
@@ -19,11 +26,21 @@ export function describeChoice(choice: Choice, folder: string | null): string {
   const winner = choice.ranking.find(({ stepper }) => stepper === choice.choice) ?? null;
   const parts = [`${choice.scenario.title}`, "", ...answer(choice, winner)];
   if (choice.current !== null) parts.push("", ...currentLines(choice.current, winner));
+  parts.push("", choice.explanation);
   if (winner !== null) parts.push("", limitsTable(winner));
   if (choice.ranking.length > 0) parts.push("", rankingTable(choice.ranking));
   if (choice.excluded.length > 0) {
     parts.push("", "Excluded:", ...choice.excluded.map(({ stepper, reason }) => `  ${stepper}: ${reason}`));
   }
+  parts.push(
+    "",
+    "If the case changes (screened with the cheapest candidates, extrapolated):",
+    sensitivityTable(choice),
+  );
+  if (choice.handOver !== null) parts.push("", handOverText(choice.handOver));
+  if (choice.bodies !== null) parts.push("", bodiesText(choice.bodies));
+  const projected = projectedTime(choice, winner);
+  if (projected !== null) parts.push("", projected);
   parts.push("", "Cautions:", ...choice.cautions.map((line) => `  - ${line}`));
   const { cellsRun, seconds } = choice.provenance;
   parts.push(
@@ -121,11 +138,7 @@ function rankingTable(ranking: readonly RankedStepper[]): string {
   const rows = ranking.map((entry, i) => [
     String(i + 1),
     entry.stepper,
-    entry.tolerance !== null
-      ? `tol ${scientific(entry.tolerance)}`
-      : entry.stepSeconds === null
-        ? `${plain(entry.stepsPerOrbit ?? 0)} steps`
-        : `${plain(entry.stepSeconds)} s`,
+    shortKnob(entry),
     plain(entry.evaluationsPerOrbit),
     entry.evaluationsTotal.toExponential(3).replace("e+", "e"),
     plain(entry.margin, 3),
@@ -133,4 +146,38 @@ function rankingTable(ranking: readonly RankedStepper[]): string {
     entry.why,
   ]);
   return table(["rank", "stepper", "step", "eval/orbit", "eval total", "margin", "evidence", "why"], rows);
+}
+
+function sensitivityTable({ sensitivity }: Choice): string {
+  const rows = sensitivity.map((entry) => [
+    entry.change,
+    entry.stepper ?? "none",
+    entry.stepper === null ? "-" : shortKnob(entry),
+    entry.evaluationsPerOrbit === null ? "-" : plain(entry.evaluationsPerOrbit),
+  ]);
+  return table(["change", "stepper", "step", "eval/orbit"], rows);
+}
+
+function shortKnob(entry: Pick<RankedStepper, "stepSeconds" | "stepsPerOrbit" | "tolerance">): string {
+  if (entry.tolerance !== null) return `tol ${scientific(entry.tolerance)}`;
+  if (entry.stepSeconds === null) return `${plain(entry.stepsPerOrbit ?? 0)} steps`;
+  return `${plain(entry.stepSeconds)} s`;
+}
+
+function handOverText(test: HandOver): string {
+  return [
+    `Hand-over test: on the production code with the point mass alone, orbit ${test.orbit} (e = ${plain(test.eccentricity, 6)}) from ${plain(test.startAnomalyDeg)} deg for ${plain(test.days)} days,`,
+    `runs with ${plain(test.stepSeconds)} s and ${plain(test.stepSeconds / 2)} s should part by ${plain(test.halfStepDifferenceKm, 3)} km at most, and a run forward and back should end ${plain(test.closureKm, 3)} km from its start. Then repeat with the full force model.`,
+  ].join("\n");
+}
+
+function bodiesText({ massRatio, heavierShare, lighterShare }: BodyErrors): string {
+  return `About the barycentre, at a mass ratio of ${massRatio}: position errors of the lighter body are ${plain(lighterShare, 4)} of those above, of the heavier ${plain(heavierShare, 4)}.`;
+}
+
+function projectedTime({ scenario }: Choice, winner: RankedStepper | null): string | null {
+  const { evaluationMicroseconds } = scenario;
+  if (evaluationMicroseconds === undefined || winner === null) return null;
+  const seconds = (winner.evaluationsTotal * evaluationMicroseconds) / 1e6;
+  return `At ${evaluationMicroseconds} microseconds a force evaluation the whole run takes ${plain(seconds, 3)} s of them.`;
 }

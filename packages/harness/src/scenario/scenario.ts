@@ -8,6 +8,12 @@ export interface Scenario {
   readonly start?: "any" | "periapsis" | "apoapsis" | number | undefined;
   readonly duration: { readonly days: number } | { readonly orbits: number };
   readonly limits: readonly ScenarioLimit[];
+  /** Share of each limit that integration may use, the rest being left to models and inputs; 1 where absent. */
+  readonly integrationShare?: number | undefined;
+  /** Mass of the lighter body over that of the heavier: each body's own error about the barycentre is then given too. */
+  readonly massRatio?: number | undefined;
+  /** Manoeuvres, eclipse edges and the like, after each of which the integrator starts anew. */
+  readonly restartsPerDay?: number | undefined;
   /** Errors of the recommended step stay below limit / designFactor; 2 where absent. */
   readonly designFactor?: number | undefined;
   readonly step?:
@@ -21,6 +27,8 @@ export interface Scenario {
         readonly tolerance?: number | undefined;
       }
     | undefined;
+  /** What one force evaluation of the production code costs; total time is projected from it. */
+  readonly evaluationMicroseconds?: number | undefined;
   /** Ids to choose from; the whole catalogue where absent. */
   readonly steppers?: readonly string[] | undefined;
 }

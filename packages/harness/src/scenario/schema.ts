@@ -47,6 +47,9 @@ export const scenarioSchema: z.ZodType<Scenario> = z.strictObject({
     .optional(),
   duration,
   limits: z.array(limit).min(1),
+  integrationShare: positive.max(1).optional(),
+  massRatio: positive.max(1).optional(),
+  restartsPerDay: finite.min(0).optional(),
   designFactor: finite.min(1).optional(),
   step: z
     .strictObject({ maxSeconds: positive.optional(), multipleOfSeconds: positive.optional() })
@@ -69,6 +72,7 @@ export const scenarioSchema: z.ZodType<Scenario> = z.strictObject({
       tolerance: positive.lt(1).optional(),
     })
     .optional(),
+  evaluationMicroseconds: positive.optional(),
   steppers: z.array(z.string()).min(1).optional(),
 });
 

@@ -1,7 +1,15 @@
 import { mkdir, readFile, writeFile } from "node:fs/promises";
 import { dirname } from "node:path";
 import { fileURLToPath } from "node:url";
-import { type Chart, type ChoiceEvidence, describeCharts, scenarioJsonSchema, toSvg } from "perigauge";
+import {
+  type Chart,
+  type Choice,
+  type ChoiceEvidence,
+  describeCharts,
+  describeChoice,
+  scenarioJsonSchema,
+  toSvg,
+} from "perigauge";
 
 /*
  * Files in git that are generated. Without an option they are written; `--check` fails where one is out of date; `--record` first takes the
@@ -22,6 +30,18 @@ const generated: readonly { readonly path: string; readonly content: () => Promi
       return `${await toSvg(chart)}\n`;
     },
   })),
+  {
+    path: "README.md",
+    content: async () => {
+      const choice = JSON.parse(await readFile(`${root}reports/demo/result.json`, "utf8")) as Choice;
+      const [shown] = describeChoice(choice, null).split(/\n(?=rank )/);
+      const readme = await readFile(`${root}README.md`, "utf8");
+      return readme.replace(
+        /<!-- demo -->[\s\S]*<!-- \/demo -->/,
+        () => `<!-- demo -->\n\`\`\`text\n${(shown ?? "").trim()}\n\`\`\`\n<!-- /demo -->`,
+      );
+    },
+  },
 ];
 
 if (process.argv.includes("--record")) await record();

@@ -4,6 +4,7 @@
 export { type Choice, LIMIT_KEYS, type LimitKey, type RankedStepper } from "./choose/choice.ts";
 export { type ChooseOptions, chooseStepper } from "./choose/choose-stepper.ts";
 // Command line
+export { describeChoice } from "./cli/describe-choice.ts";
 export { buildProgram } from "./cli/program.ts";
 export { EXIT, runCommandLine } from "./cli/run-command-line.ts";
 // Cells and scores

@@ -121,8 +121,19 @@ export function inventedEvidence(invention: Invention = {}): ChoiceEvidence {
         evidence: "extrapolated",
       },
     ],
-    handOver: null,
-    bodies: null,
+    handOver: qualifies
+      ? {
+          days: 7,
+          orbits: 29.2,
+          orbit: "inner",
+          eccentricity: 0.551943821,
+          startAnomalyDeg: 30,
+          stepSeconds: 60,
+          halfStepDifferenceKm: 0.0321,
+          closureKm: 1.23e-5,
+        }
+      : null,
+    bodies: qualifies ? { massRatio: 0.5, heavierShare: 1 / 3, lighterShare: 2 / 3 } : null,
     cautions: [
       "rk4 at whole numbers of steps per orbit below 180 can resonate; the band was run at offsets.",
     ],

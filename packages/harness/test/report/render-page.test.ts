@@ -59,6 +59,14 @@ describe("page of a choice", () => {
     expect(body).toContain(String(choice.provenance.seed));
   });
 
+  it("says what a changed case would take and what the production code should show", () => {
+    const text = body.replace(/<[^>]+>/g, "");
+    expect(text).toContain("limits 10 times tighter");
+    expect(text).toContain("none qualifies");
+    expect(text).toContain("part by at most 0.0321 km");
+    expect(text).toContain("the heavier body takes 0.333");
+  });
+
   it("asks the browser for nothing: policy closed, no address but names of schemas", () => {
     expect(page).toContain("default-src 'none'");
     expect(body).not.toMatch(/https?:/);

@@ -2,12 +2,12 @@ import type { RankedStepper } from "../../choose/choice.ts";
 import type { Chart } from "../chart.ts";
 import type { ChoiceEvidence } from "../evidence.ts";
 import { colour } from "../look/palette.ts";
-import { formatNumber, formatTimes } from "../text/number.ts";
+import { formatNumber, formatTimes, NO_BREAK } from "../text/number.ts";
 import { durationWords, knobWords, plural } from "../text/words.ts";
 import { makeChart, type Row } from "./make-chart.ts";
 
 const MOST_BARS = 24;
-const WORDS_WIDTH = 118;
+const WORDS_WIDTH = 70;
 
 /** What does each candidate cost that holds the limits? Force evaluations of the whole fleet and duration. */
 export function costBars(evidence: ChoiceEvidence): Chart | null {
@@ -118,9 +118,10 @@ function rowOf(ranked: RankedStepper, first: RankedStepper, label: string, chose
     evidence: ranked.evidence,
     chosen,
     today: false,
-    words: `${formatNumber(ranked.evaluationsTotal)}${
-      ranked === first ? "" : `  (${formatTimes(ranked.evaluationsTotal / first.evaluationsTotal)}×)`
-    }`,
+    words:
+      ranked === first
+        ? formatNumber(ranked.evaluationsTotal)
+        : `${formatTimes(ranked.evaluationsTotal / first.evaluationsTotal)}${NO_BREAK}×`,
   };
 }
 

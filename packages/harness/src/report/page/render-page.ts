@@ -16,6 +16,7 @@ import { pageScript } from "./script.ts";
 import { pageStyle } from "./style.ts";
 import { today } from "./today.ts";
 import { chosenOf, verdict } from "./verdict.ts";
+import { handOver, whatIf } from "./what-if.ts";
 
 /** Drawings made beforehand, by chart name: what the page shows until its script has drawn, in print without scripts, or if it cannot run. */
 export type Drawings = ReadonlyMap<string, string>;
@@ -46,9 +47,11 @@ ${today(choice)}
 ${compliance(evidence)}
 ${ranking(choice)}
 ${excluded(choice)}
+${whatIf(choice)}
 <section aria-labelledby="charts"><h2 id="charts">Charts</h2>
 ${legend(chooseLooks(evidence))}
 ${figures(charts, (name) => trusted(withColourVariables(drawings.get(name) ?? "")))}</section>
+${handOver(choice)}
 ${method(evidence)}
 ${cautions(evidence)}
 ${provenance(evidence)}
@@ -79,7 +82,11 @@ function contents({ choice }: ChoiceEvidence): Markup {
     ...(choice.choice === null ? [] : [["compliance", "Compliance"] as [string, string]]),
     ["ranking", "Ranking"],
     ...(choice.excluded.length === 0 ? [] : [["excluded", "Excluded"] as [string, string]]),
+    ...(choice.sensitivity.length === 0 ? [] : [["what-if", "What if"] as [string, string]]),
     ["charts", "Charts"],
+    ...(choice.handOver === null && choice.bodies === null
+      ? []
+      : [["hand-over", "Hand-over"] as [string, string]]),
     ["method", "Method"],
     ["cautions", "Cautions"],
     ["provenance", "Provenance"],

@@ -43,7 +43,8 @@ ${
     : html`<li><span class="figure">${formatNumber(chosen.stepsPerOrbit, 4)}</span> steps per orbit, shortest orbit</li>`
 }
 </ul>
-<p>${wholeWords(`${bandWords(chosen)} ${edgeWords(chosen)} ${runnerUpWords(choice, chosen)}`)}</p>`;
+<p>${wholeWords(`${bandWords(chosen)} ${edgeWords(chosen)} ${runnerUpWords(choice, chosen)}`)}</p>
+<details><summary>In plain words</summary><p>${choice.explanation}</p></details>`;
 }
 
 function noneQualifies(choice: Choice): Markup {

@@ -14,7 +14,7 @@ export {
 } from "./arithmetic/double-double.ts";
 export { ddArctangent2 } from "./arithmetic/double-double-arctangent.ts";
 export { type DoubleDoubleSinCos, ddSinCos, ddSinCosDegrees } from "./arithmetic/double-double-sin-cos.ts";
-export { twoProduct } from "./arithmetic/two-product.ts";
+export { splitter, twoProduct } from "./arithmetic/two-product.ts";
 export { quickTwoSum, twoSum } from "./arithmetic/two-sum.ts";
 // Conics in two and three dimensions
 export {

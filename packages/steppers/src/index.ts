@@ -38,6 +38,7 @@ export type { PairStepper } from "./run/variable-step.ts";
 
 // Blocks of trajectories in vector lanes.
 
+export { type AttemptKernel, attemptKernel } from "./lanes/attempt-kernel.ts";
 export type { FunctionCode } from "./lanes/encoder.ts";
 export {
   compileLanes,

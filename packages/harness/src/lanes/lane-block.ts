@@ -1,8 +1,8 @@
 import { cellSize } from "@perigauge/kepler";
 import { LANES } from "@perigauge/steppers";
-import { COLLISION_SHARE, type DivergenceReason, findEnd } from "../score/run-end.ts";
+import { COLLISION_SHARE, type DivergenceReason } from "../score/run-end.ts";
 import type { Score, StepMeasure } from "../score/score.ts";
-import type { LaneMachine, LaneStepper } from "./lane-machine.ts";
+import type { LaneMachine } from "./lane-machine.ts";
 import type { LaneRun } from "./lane-run.ts";
 import {
   CHUNK,
@@ -20,31 +20,41 @@ import {
 /** Doubles of a row. */
 const ROW = STATE_BYTES / 32;
 
+/** What a block needs of a stepper's kernel. */
+export interface BlockKernel {
+  readonly streamBytes: number;
+  advance(count: number, stream: number, lanes: number): void;
+  moveLane(from: number, to: number, stream: number): void;
+}
+
+/** What a block is run with. */
+export interface BlockSetting {
+  readonly machine: LaneMachine;
+  readonly kernel: BlockKernel;
+  readonly score: (from: number, count: number, width: number) => number;
+  readonly queue: Iterator<LaneRun>;
+  /** Scores are written to the places of their runs. */
+  readonly scores: Score[];
+}
+
 /**
- * Runs a queue of cells of one stepper in up to 16 lanes. All lanes advance together, to the nearest stop of any; a lane whose run has
- * ended takes the next cell from the queue, or, where that is empty, the last lane moves into its place, so that no lane works for nothing.
+ * Runs a queue of cells of one stepper in up to 16 lanes. A lane whose run has ended takes the next cell from the queue, or, where that is
+ * empty, the last lane moves into its place, so that no lane works for nothing.
  */
-export class LaneBlock {
-  private readonly machine: LaneMachine;
-  private readonly stepper: LaneStepper;
-  private readonly score: (count: number, width: number) => number;
-  private readonly lanes: LaneRun[] = [];
-  private readonly queue: Iterator<LaneRun>;
-  private readonly scores: Score[];
-  private readonly state = new Float64Array(4);
+export abstract class LaneBlock<Run extends LaneRun> {
+  protected readonly machine: LaneMachine;
+  protected readonly kernel: BlockKernel;
+  protected readonly score: BlockSetting["score"];
+  protected readonly lanes: Run[] = [];
+  protected readonly scores: Score[];
+  protected readonly state: Float64Array = new Float64Array(4);
+  private readonly queue: Iterator<Run>;
   private readonly exact = new Float64Array(4);
   private generation: number;
 
-  /** Scores are written to `scores` by the index of their runs. */
-  constructor(
-    machine: LaneMachine,
-    stepper: LaneStepper,
-    score: (count: number, width: number) => number,
-    queue: Iterator<LaneRun>,
-    scores: Score[],
-  ) {
+  constructor({ machine, kernel, score, queue, scores }: BlockSetting & { readonly queue: Iterator<Run> }) {
     this.machine = machine;
-    this.stepper = stepper;
+    this.kernel = kernel;
     this.score = score;
     this.queue = queue;
     this.scores = scores;
@@ -58,18 +68,19 @@ export class LaneBlock {
       this.fillOddLane();
       let count = CHUNK;
       for (const lane of this.lanes) count = Math.min(count, lane.wanted);
-      const width = 16 * Math.ceil(this.lanes.length / 2);
-      this.stepper.kernel.advance(count, STREAM_AT, this.lanes.length);
-      this.machine.track(count, width);
-      const passed = this.score(count, width);
-      if (passed !== 0) this.reportPassages(count);
-      this.settle(count);
-      const { streamBytes } = this.stepper.kernel;
-      moveRow(doubles, STREAM_AT, count, streamBytes);
+      this.kernel.advance(count, STREAM_AT, this.lanes.length);
+      this.settle(count, 16 * Math.ceil(this.lanes.length / 2));
+      moveRow(doubles, STREAM_AT, count, this.kernel.streamBytes);
       moveRow(doubles, EXACT_AT, count, STATE_BYTES);
       this.retire();
     }
   }
+
+  /** Scores the chunk, hands results over where a run wants to be looked at, and marks those that have ended. */
+  protected abstract settle(count: number, width: number): void;
+
+  /** What the lane's rows of the track hold beside the orbit's constants. */
+  protected abstract trackValues(run: Run): Readonly<Record<string, number>>;
 
   private takeNext(lane: number): boolean {
     const next = this.queue.next();
@@ -79,16 +90,16 @@ export class LaneBlock {
     return true;
   }
 
-  private fill(lane: number, run: LaneRun): void {
+  private fill(lane: number, run: Run): void {
     const { doubles } = this.machine;
     const { start, orbit, scorer } = run;
-    this.stepper.kernel.setLane(lane, run.step, run.variables, STREAM_AT);
+    run.put(lane);
     start.forEach((value, c) => {
       doubles[EXACT_AT / 8 + c * ROW + lane] = value;
     });
-    const track = { ...run.track, ...run.words, step: 0 };
+    const track: Readonly<Record<string, unknown>> = { ...run.track, ...this.trackValues(run) };
     for (const [name, offset] of Object.entries(trackRows)) {
-      const value = track[name as keyof typeof track];
+      const value = track[name];
       if (typeof value === "number") doubles[offset / 8 + lane] = value;
     }
     this.pointToTable(lane, run);
@@ -130,7 +141,7 @@ export class LaneBlock {
   }
 
   /** The table's address, less that of its cell number zero; the kernel adds in 32 bits. */
-  private pointToTable(lane: number, { track }: LaneRun): void {
+  private pointToTable(lane: number, { track }: Run): void {
     const { tables, integers } = this.machine;
     const address = tables.addressOf(track.rows);
     const at = trackRows.tableBias / 4 + 2 * lane;
@@ -160,69 +171,71 @@ export class LaneBlock {
     for (let c = 0; c < 4; c++) {
       doubles[EXACT_AT / 8 + c * ROW + to] = doubles[EXACT_AT / 8 + c * ROW + from] as number;
     }
-    this.stepper.kernel.moveLane(from, to, STREAM_AT);
+    this.kernel.moveLane(from, to, STREAM_AT);
   }
 
-  /** Tells each scorer of its passages, in the order of the steps. */
-  private reportPassages(count: number): void {
+  /** Tells each scorer of its passages in rows `from` + 1 to `to`, in their order. */
+  protected reportPassages(from: number, to: number): void {
     const { integers } = this.machine;
-    const { streamBytes } = this.stepper.kernel;
-    for (let n = 0; n < count; n++) {
+    for (let n = from; n < to; n++) {
       for (let word = integers[EVENTS_AT / 4 + n] as number; word !== 0; word &= word - 1) {
         const lane = 31 - Math.clz32(word & -word);
-        const run = this.lanes[lane] as LaneRun;
-        this.readState(STREAM_AT + n * streamBytes, lane, this.state);
+        const run = this.lanes[lane] as Run;
+        this.readState(STREAM_AT + n * this.kernel.streamBytes, lane, this.state);
         this.readState(EXACT_AT + n * STATE_BYTES, lane, this.exact);
-        run.scorer.passages?.passAfter(this.state, this.exact, (run.made + n) * run.step);
+        run.scorer.passages?.passAfter(this.state, this.exact, this.timeAt(run, lane, n));
       }
     }
   }
 
-  private readState(at: number, lane: number, out: Float64Array): void {
+  /** Time of row n of the stream, in doubles. */
+  protected abstract timeAt(run: Run, lane: number, n: number): number;
+
+  protected readState(at: number, lane: number, out: Float64Array): void {
     const { doubles } = this.machine;
     for (let c = 0; c < 4; c++) out[c] = doubles[at / 8 + c * ROW + lane] as number;
   }
 
-  /** Hands results over at stops, and those of runs that have ended. */
-  private settle(count: number): void {
-    const { doubles } = this.machine;
-    const { streamBytes } = this.stepper.kernel;
-    this.lanes.forEach((run, lane) => {
-      const before = run.made;
-      const steps = doubles[scoreRows.lastAlive / 8 + lane] as number;
-      const stops = run.count(count);
-      const diverged = steps < run.made;
-      if (!stops && !diverged) return;
-      let divergence: DivergenceReason | null = null;
-      if (diverged) {
-        this.readState(STREAM_AT + (steps + 1 - before) * streamBytes, lane, this.state);
-        divergence = findEnd(this.state, 1, run.scorer.eccentricity)?.reason ?? null;
-      }
-      this.readState(STREAM_AT + (steps - before) * streamBytes, lane, this.state);
-      run.scorer.adopt({
-        steps,
-        state: this.state,
-        maximum: (name: StepMeasure) => ({
-          value: doubles[maximumRows[name] / 8 + lane] as number,
-          atStep: doubles[maximumAtRows[name] / 8 + lane] as number,
-        }),
-        phaseUncertain: this.machine.integers[scoreRows.uncertain / 4 + 2 * lane] !== 0,
-        divergence,
-      });
-      if (diverged || run.finished) {
-        run.ended = true;
-        this.scores[run.index] = run.finish(diverged ? steps + 1 : steps);
-      }
+  /** Hands a lane's maxima to its scorer; `row` of the stream is the last that they cover. */
+  protected handOver(
+    run: Run,
+    lane: number,
+    row: number,
+    steps: number,
+    divergence: DivergenceReason | null,
+    nextTime: number | null,
+  ): void {
+    const { doubles, integers } = this.machine;
+    this.readState(STREAM_AT + row * this.kernel.streamBytes, lane, this.state);
+    run.scorer.adopt({
+      steps,
+      time: this.timeAt(run, lane, row),
+      state: this.state,
+      maximum: (name: StepMeasure) => ({
+        value: doubles[maximumRows[name] / 8 + lane] as number,
+        at: doubles[maximumAtRows[name] / 8 + lane] as number,
+      }),
+      phaseUncertain: integers[scoreRows.uncertain / 4 + 2 * lane] !== 0,
+      divergence,
+      nextTime,
     });
+  }
+
+  protected scored(lane: number): { readonly steps: number; readonly alive: boolean } {
+    const { doubles, integers } = this.machine;
+    return {
+      steps: doubles[scoreRows.lastAlive / 8 + lane] as number,
+      alive: integers[scoreRows.alive / 4 + 2 * lane] !== 0,
+    };
   }
 
   private retire(): void {
     for (let lane = this.lanes.length - 1; lane >= 0; lane--) {
-      if (!(this.lanes[lane] as LaneRun).ended || this.takeNext(lane)) continue;
+      if (!(this.lanes[lane] as Run).ended || this.takeNext(lane)) continue;
       const last = this.lanes.length - 1;
       if (lane < last) {
         this.copyLane(last, lane);
-        this.lanes[lane] = this.lanes[last] as LaneRun;
+        this.lanes[lane] = this.lanes[last] as Run;
       }
       this.lanes.pop();
     }

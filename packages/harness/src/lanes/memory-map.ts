@@ -19,6 +19,10 @@ const TRACK_ROWS = [
   "w2",
   "w3",
   "w4",
+  "rateHi",
+  "rateLo",
+  "rateUpper",
+  "rateLower",
   "startHi",
   "startLo",
   "e",
@@ -102,6 +106,8 @@ export const STATE_BYTES: number = 4 * ROW_BYTES;
 export const EXACT_AT: number = EVENTS_AT + 4 * CHUNK;
 /** Numerical states likewise, with the time where steps are uneven. */
 export const STREAM_AT: number = EXACT_AT + (CHUNK + 1) * STATE_BYTES;
+/** Bytes of the stream per step where it holds times: a state, then hi and lo of the time. */
+export const UNEVEN_STREAM_BYTES: number = 6 * ROW_BYTES;
 /** Anomaly tables. */
-export const TABLES_AT: number = STREAM_AT + (CHUNK + 1) * 6 * ROW_BYTES;
+export const TABLES_AT: number = STREAM_AT + (CHUNK + 1) * UNEVEN_STREAM_BYTES;
 export const TABLES_BYTES: number = 8 * 1024 * 1024;

@@ -19,6 +19,8 @@ export interface ScoreSetting {
   readonly passages: boolean;
   /** Of a circular orbit: passages are returns of the polar angle. */
   readonly circular: boolean;
+  /** Steps take unequal times, which the stream holds; a row whose time is that before it is no step. */
+  readonly uneven: boolean;
   /** Bytes of the stream per step. */
   readonly streamBytes: number;
 }
@@ -26,13 +28,13 @@ export interface ScoreSetting {
 const ROW = STATE_BYTES / 4;
 
 /**
- * The function `score(count, width)`: the measures of `RunScorer` at rows 1 .. count of the stream, operation for operation, and their
+ * The function `score(from, count, width)`: the measures of `RunScorer` at `count` rows of the stream after row `from`, operation for operation, and their
  * running maxima; the ends of `findEnd`; and the steps in which a lane passed periapsis, a bit per lane in the word of the step. Returns
  * all those words joined by "or".
  */
 export function scoreCode(setting: ScoreSetting): FunctionCode {
-  const code = new LaneCode(2, 10);
-  const [count, width] = [code.parameter(0), code.parameter(1)];
+  const code = new LaneCode(3, 10);
+  const [from, count, width] = [code.parameter(0), code.parameter(1), code.parameter(2)];
   const pair = { lane: code.pointer(), stream: code.pointer(), exact: code.pointer() };
   const [streamRow, exactRow, events] = [code.pointer(), code.pointer(), code.pointer()];
   const [passed, passedAny] = [code.pointer(), code.pointer()];
@@ -48,9 +50,9 @@ export function scoreCode(setting: ScoreSetting): FunctionCode {
       for (const pointer of Object.values(pair)) code.advance(pointer, PAIR_BYTES);
     });
   };
-  code.set(streamRow, STREAM_AT + setting.streamBytes);
-  code.set(exactRow, EXACT_AT + STATE_BYTES);
-  code.set(events, EVENTS_AT);
+  code.setScaled(streamRow, from, setting.streamBytes, STREAM_AT);
+  code.setScaled(exactRow, from, STATE_BYTES, EXACT_AT + STATE_BYTES);
+  code.setScaled(events, from, 4, EVENTS_AT);
   code.set(passedAny, 0);
   code.countDown(count, () => {
     code.set(passed, 0);
@@ -97,7 +99,7 @@ class StageWriter {
     const { measures } = this.setting;
     const [x, y] = this.position("stream");
     const [vx, vy] = this.velocity("stream");
-    const step = code.add(this.row("step"), this.constant(1));
+    const step = code.add(this.row("step"), this.stepsMade());
     this.store("step", step);
     const r2 = this.dot(x, y, x, y);
     const v2 = this.dot(vx, vy, vx, vy);
@@ -107,23 +109,36 @@ class StageWriter {
     this.store("alive", alive);
     this.store("lastAlive", code.select(alive, step, this.row("lastAlive")));
     if (measures.has("energy")) {
-      this.keep(
-        "energy",
-        code.mul(code.sub(energy, this.row("energy0")), this.row("energyScale")),
-        alive,
-        step,
-      );
+      this.keep("energy", code.mul(code.sub(energy, this.row("energy0")), this.row("energyScale")), alive);
     }
     const momentum = code.sub(code.mul(x, vy), code.mul(y, vx));
     if (measures.has("angularMomentum")) {
       const error = code.mul(code.sub(momentum, this.row("momentum0")), this.row("momentumScale"));
-      this.keep("angularMomentum", error, alive, step);
+      this.keep("angularMomentum", error, alive);
     }
     if (measures.has("apsis")) {
       this.store("inverse", inverse);
       this.store("momentum", momentum);
     }
     return alive;
+  }
+
+  /** 1, or 0 where the row repeats the one before it. */
+  private stepsMade(): Operand {
+    const { code } = this;
+    if (!this.setting.uneven) return this.constant(1);
+    const { stream } = this.places;
+    const { streamBytes } = this.setting;
+    const changed = [4, 5].map((k) =>
+      code.notEqual(code.row(stream, streamBytes + k * ROW), code.row(stream, k * ROW)),
+    ) as [Operand, Operand];
+    return code.and(code.or(...changed), this.constant(1));
+  }
+
+  /** What is kept of the place of a maximum: the step, or its time. */
+  private place(): Operand {
+    const { stream } = this.places;
+    return this.setting.uneven ? this.code.row(stream, this.setting.streamBytes + 4 * ROW) : this.row("step");
   }
 
   private alive(r2: Operand, v2: Operand, energy: Operand): Operand {
@@ -166,7 +181,7 @@ class StageWriter {
     const angle = writeAngle(code, cross, this.dot(ex, ey, ax, ay), this.nodes);
     writeNearestTurn(code, angle, code.load(this.places.lane, scoreRows.apsis));
     this.store("apsis", angle);
-    this.keep("apsis", angle, this.row("alive"), this.row("step"));
+    this.keep("apsis", angle, this.row("alive"));
   }
 
   /** `PhaseErrors`. */
@@ -182,7 +197,7 @@ class StageWriter {
     const jumped = code.and(code.greater(jump, this.constant(0.5 * Math.PI)), this.row("alive"));
     this.store("uncertain", code.or(this.row("uncertain"), jumped));
     this.store("phase", angle);
-    if (this.setting.measures.has("phase")) this.keep("phase", angle, this.row("alive"), this.row("step"));
+    if (this.setting.measures.has("phase")) this.keep("phase", angle, this.row("alive"));
   }
 
   /** `displacementErrors`; the phase is known. */
@@ -193,7 +208,7 @@ class StageWriter {
     const [xe, ye] = this.position("exact");
     const [dx, dy] = [code.sub(x, xe), code.sub(y, ye)];
     const keep = (name: StepMeasure, error: Operand): void => {
-      this.keep(name, error, this.row("alive"), this.row("step"));
+      this.keep(name, error, this.row("alive"));
     };
     if (measures.has("position")) keep("position", code.sqrt(this.dot(dx, dy, dx, dy)));
     if (measures.has("alongTrack")) {
@@ -209,28 +224,35 @@ class StageWriter {
   }
 
   /** `Maximum`. */
-  private keep(name: StepMeasure, error: Operand, alive: Operand, step: Operand): void {
+  private keep(name: StepMeasure, error: Operand, alive: Operand): void {
     const { code } = this;
     const { lane } = this.places;
     const size = code.abs(error);
     const largest = code.load(lane, maximumRows[name]);
     const larger = code.and(code.greater(size, largest), alive);
     code.store(lane, maximumRows[name], code.select(larger, size, largest));
-    code.store(lane, maximumAtRows[name], code.select(larger, step, code.row(lane, maximumAtRows[name])));
+    code.store(
+      lane,
+      maximumAtRows[name],
+      code.select(larger, this.place(), code.row(lane, maximumAtRows[name])),
+    );
   }
 
   private position(of: "stream" | "exact"): readonly [Operand, Operand] {
-    return [this.code.load(this.places[of], 0), this.code.load(this.places[of], ROW)];
+    return [this.component(of, 0), this.component(of, 1)];
   }
 
   private velocity(of: "stream" | "exact"): readonly [Operand, Operand] {
-    return [this.code.load(this.places[of], 2 * ROW), this.code.load(this.places[of], 3 * ROW)];
+    return [this.component(of, 2), this.component(of, 3)];
+  }
+
+  /** The pointer into the stream stands at the row before. */
+  private component(of: "stream" | "exact", c: number): Operand {
+    return this.code.load(this.places[of], c * ROW + (of === "stream" ? this.setting.streamBytes : 0));
   }
 
   private rising(): Operand {
-    const [x, y] = this.position("stream");
-    const [vx, vy] = this.velocity("stream");
-    return this.dot(x, y, vx, vy);
+    return this.dot(...this.position("stream"), ...this.velocity("stream"));
   }
 
   private dot(ax: Operand, ay: Operand, bx: Operand, by: Operand): Operand {

@@ -1,6 +1,6 @@
-import { cellShift, cellSize } from "@perigauge/kepler";
+import { cellShift, cellSize, splitter } from "@perigauge/kepler";
 import { type FunctionCode, LaneCode, type Operand, PAIR_BYTES, type Pointer } from "@perigauge/steppers";
-import { EXACT_AT, STATE_BYTES, trackRows } from "./memory-map.ts";
+import { EXACT_AT, STATE_BYTES, STREAM_AT, trackRows, UNEVEN_STREAM_BYTES } from "./memory-map.ts";
 
 /** Adding and subtracting 1.5 2^52 rounds to the nearest integer. */
 const TO_NEAREST = 6755399441055744;
@@ -9,44 +9,82 @@ const ROW = STATE_BYTES / 4;
 
 /**
  * The function `track(count, width)`: `ReferenceTrack.statesAtSteps` in lanes, operation for operation, each lane with an orbit, a step
- * and a step number of its own. Writes rows 1 .. count of the exact states.
+ * and a step number of its own; or, as `trackTimes`, `statesAtTimes` of the times in the stream. Writes rows 1 .. count of the exact states.
  */
-export function trackCode(): FunctionCode {
-  const code = new LaneCode(2, 5);
+export function trackCode(times: "steps" | "stream"): FunctionCode {
+  const code = new LaneCode(2, 7);
   const [count, width] = [code.parameter(0), code.parameter(1)];
   const [lane, exact, out] = [code.pointer(), code.pointer(), code.pointer()];
+  const [stream, streamRow] = [code.pointer(), code.pointer()];
   const [first, second] = [code.pointer(), code.pointer()];
   code.set(out, EXACT_AT + STATE_BYTES);
+  code.set(streamRow, STREAM_AT + UNEVEN_STREAM_BYTES);
   const overLanes = (body: () => void): void => {
     code.set(lane, 0);
     code.set(exact, out);
+    code.set(stream, streamRow);
     code.repeat(lane, width, () => {
       body();
-      code.advance(lane, PAIR_BYTES);
-      code.advance(exact, PAIR_BYTES);
+      for (const pointer of [lane, exact, stream]) code.advance(pointer, PAIR_BYTES);
     });
   };
   code.countDown(count, () => {
-    overLanes(() => writeMeanAnomaly(code, lane));
+    overLanes(() => {
+      if (times === "steps") writeMeanAnomaly(code, lane);
+      else writeMeanAnomalyAt(code, lane, stream);
+    });
     overLanes(() => writeNode(code, lane, [first, second]));
     overLanes(() => writeCorrection(code, lane));
     overLanes(() => writeState(code, lane, exact));
     code.advance(out, STATE_BYTES);
+    code.advance(streamRow, UNEVEN_STREAM_BYTES);
   });
-  return code.finish("track");
+  return code.finish(times === "steps" ? "track" : "trackTimes");
+}
+
+const withoutTurns = (code: LaneCode, x: Operand): Operand => {
+  const shift = code.constant(TO_NEAREST);
+  return code.sub(x, code.sub(code.add(x, shift), shift));
+};
+
+/** Mean anomaly at the time in the stream, in turns, two words: an exact product, whole turns dropped, plus the start. */
+function writeMeanAnomalyAt(code: LaneCode, lane: Pointer, stream: Pointer): void {
+  const row = (name: keyof typeof trackRows): Operand => code.row(lane, trackRows[name]);
+  const hi = code.load(stream, 4 * ROW);
+  const lo = code.load(stream, 5 * ROW);
+  const [b1, b2] = [row("rateUpper"), row("rateLower")];
+  const p = code.mul(hi, row("rateHi"));
+  const ta = code.mul(code.constant(splitter), hi);
+  const a1 = code.sub(ta, code.sub(ta, hi));
+  const a2 = code.sub(hi, a1);
+  let low = code.sub(code.mul(a1, b1), p);
+  for (const product of [code.mul(a1, b2), code.mul(a2, b1), code.mul(a2, b2)]) low = code.add(low, product);
+  low = code.add(low, code.add(code.mul(hi, row("rateLo")), code.mul(lo, row("rateHi"))));
+  const f = withoutTurns(code, p);
+  const u = code.add(f, low);
+  const ut = code.sub(u, f);
+  const uLow = code.add(code.sub(f, code.sub(u, ut)), code.sub(low, ut));
+  const g = withoutTurns(code, u);
+  const startHi = code.load(lane, trackRows.startHi);
+  const v = code.add(g, startHi);
+  const vt = code.sub(v, g);
+  // A run that has diverged may bring any time; its lane must still look inside its table.
+  const mean = withoutTurns(code, v);
+  const bounded = code.lessEqual(code.abs(mean), code.constant(0.5));
+  code.store(lane, trackRows.meanHi, code.and(bounded, mean));
+  const vLow = code.add(code.sub(g, code.sub(v, vt)), code.sub(startHi, vt));
+  code.store(lane, trackRows.meanLo, code.add(vLow, code.add(uLow, row("startLo"))));
 }
 
 /** Mean anomaly of the next step in turns, two words. */
 function writeMeanAnomaly(code: LaneCode, lane: Pointer): void {
   const row = (name: keyof typeof trackRows): Operand => code.row(lane, trackRows[name]);
   const c = (value: number): Operand => code.constant(value);
-  const withoutTurns = (x: Operand): Operand =>
-    code.sub(x, code.sub(code.add(x, c(TO_NEAREST)), c(TO_NEAREST)));
   const startHi = code.load(lane, trackRows.startHi);
   const k = code.add(row("step"), c(1));
   code.store(lane, trackRows.step, k);
-  const s = code.add(withoutTurns(code.mul(k, row("w1"))), withoutTurns(code.mul(k, row("w2"))));
-  const f = withoutTurns(s);
+  const s = code.add(withoutTurns(code, code.mul(k, row("w1"))), withoutTurns(code, code.mul(k, row("w2"))));
+  const f = withoutTurns(code, s);
   const p3 = code.mul(k, row("w3"));
   const u = code.add(f, p3);
   const ut = code.sub(u, f);
@@ -54,7 +92,7 @@ function writeMeanAnomaly(code: LaneCode, lane: Pointer): void {
   const v = code.add(u, startHi);
   const vt = code.sub(v, u);
   const vLow = code.add(code.sub(u, code.sub(v, vt)), code.sub(startHi, vt));
-  code.store(lane, trackRows.meanHi, withoutTurns(v));
+  code.store(lane, trackRows.meanHi, withoutTurns(code, v));
   const start = code.add(row("startLo"), code.mul(k, row("w4")));
   code.store(lane, trackRows.meanLo, code.add(vLow, code.add(uLow, start)));
 }

@@ -1,5 +1,5 @@
 import { findStepper, LANES } from "@perigauge/steppers";
-import { isProgramStepper } from "../lanes/lane-machine.ts";
+import { runsInLanes } from "../lanes/lane-machine.ts";
 import type { CellJob } from "./cell-task.ts";
 
 /**
@@ -21,7 +21,7 @@ export function taskIndices(jobs: readonly CellJob[], workers: number): number[]
   const groups = new Map<string, number[]>();
   jobs.forEach(({ cell }, index) => {
     const stepper = findStepper(cell.stepper);
-    const lanes = stepper !== undefined && isProgramStepper(stepper) && !stepper.uneven;
+    const lanes = stepper !== undefined && runsInLanes(stepper);
     const key = lanes ? `${cell.stepper} ${cell.summation}` : "";
     groups.set(key, [...(groups.get(key) ?? []), index]);
   });

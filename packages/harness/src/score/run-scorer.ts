@@ -45,15 +45,23 @@ export interface ObservedWindow {
   readonly errors: Readonly<Record<StepMeasure, Float64Array>>;
 }
 
-/** A run of even steps that was scored elsewhere, as it stands after `steps` steps. */
+/** A run that was scored elsewhere, as it stands after `steps` steps. */
 export interface AdoptedProgress {
   readonly steps: number;
+  /** Reached at this time. */
+  readonly time: number;
   /** x, y, vx, vy. */
   readonly state: Float64Array;
-  readonly maximum: (name: StepMeasure) => { readonly value: number; readonly atStep: number };
+  /** Largest absolute values so far (-1: none), and the step each was met at, or the time where steps are uneven. */
+  readonly maximum: (name: StepMeasure) => { readonly value: number; readonly at: number };
   readonly phaseUncertain: boolean;
   readonly divergence: DivergenceReason | null;
+  /** Where steps are uneven: time of the next step, if horizons before it are to be kept. */
+  readonly nextTime: number | null;
 }
+
+/** Uneven steps may overshoot a horizon by rounding. */
+export const HORIZON_SLACK: number = 1 + 1e-12;
 
 export const FULL_PLAN: ScoringPlan = { measures: new Set(MEASURES), summaries: "all", horizons: [] };
 
@@ -154,15 +162,16 @@ export class RunScorer {
   /** Takes over what was scored elsewhere, with horizons kept where it stops at them; passages were reported one by one. */
   adopt(progress: AdoptedProgress): void {
     this.steps = progress.steps;
-    this.lastTime = progress.steps * (this.resolved.step as number);
+    this.lastTime = progress.time;
     this.lastState.set(progress.state);
     for (const name of this.wanted) {
-      const { value, atStep } = progress.maximum(name);
+      const { value, at } = progress.maximum(name);
       this.maxima[name].value = value;
-      this.maxima[name].atStep = atStep;
+      if (this.resolved.stepper.uneven) this.maxima[name].atTime = at;
+      else this.maxima[name].atStep = at;
     }
     this.phaseErrors.uncertain = progress.phaseUncertain;
-    this.closeHorizons(null);
+    this.closeHorizons(progress.nextTime);
     this.divergence = progress.divergence;
   }
 
@@ -170,7 +179,7 @@ export class RunScorer {
   private cutAtHorizon(chunk: Chunk, from: number, count: number): number {
     const horizon = this.plan.horizons[this.horizonMaxima.length];
     if (horizon === undefined) return count;
-    const limit = horizon * TWO_PI * (1 + 1e-12);
+    const limit = horizon * TWO_PI * HORIZON_SLACK;
     let to = from;
     while (to < count && chunk.times[2 * to]! <= limit) to++;
     return to;
@@ -185,7 +194,7 @@ export class RunScorer {
       const reached =
         stepsPerOrbit !== null && !this.resolved.stepper.uneven
           ? this.steps >= stepsBy(horizon, stepsPerOrbit)
-          : nextTime !== null && nextTime > horizon * TWO_PI * (1 + 1e-12);
+          : nextTime !== null && nextTime > horizon * TWO_PI * HORIZON_SLACK;
       if (!reached) return;
       this.horizonMaxima.push(this.maximaSoFar(horizon));
     }

@@ -1,6 +1,6 @@
 import { catalogue, findStepper, type Stepper } from "@perigauge/steppers";
 import { describe, expect, it } from "vitest";
-import { isProgramStepper } from "../../src/lanes/lane-machine.ts";
+import { runsInLanes } from "../../src/lanes/lane-machine.ts";
 import { runInLanes } from "../../src/lanes/run-in-lanes.ts";
 import { CellPool } from "../../src/run/cell-pool.ts";
 import type { CellJob } from "../../src/run/cell-task.ts";
@@ -37,7 +37,32 @@ function jobsOf(stepper: string, finest: number): CellJob[] {
   return jobs;
 }
 
-const fixed = catalogue.filter((stepper) => isProgramStepper(stepper) && !stepper.uneven);
+/** The same for steps of unequal times; horizons close together, and one before the first step. */
+function unevenJobsOf(stepper: Stepper): CellJob[] {
+  const knobs =
+    stepper.knob === "step"
+      ? [{ stepsPerOrbit: 20 }, { stepsPerOrbit: 300.3 }, { stepsPerOrbit: 1201 }]
+      : [{ tolerance: 1e-3 }, { tolerance: 1e-6, maxStep: 0.03 }, { tolerance: 3e-8 }];
+  return [0, 1e-3, 0.3, 0.56, 0.9, 0.99].flatMap((eccentricity) =>
+    [0, 30, 180, -77.7].flatMap((startAnomalyDeg) =>
+      knobs.map((knob) => ({
+        cell: {
+          stepper: stepper.id,
+          eccentricity,
+          ...knob,
+          orbits: 7 + startAnomalyDeg / 90,
+          startAnomalyDeg,
+          summation: "plain" as const,
+        },
+        horizons: eccentricity === 0.56 ? [] : [0.001, 1.5, 1.5001, 3],
+      })),
+    ),
+  );
+}
+
+const inLanes = catalogue.filter(runsInLanes);
+const fixed = inLanes.filter(({ uneven }) => !uneven);
+const uneven = inLanes.filter((stepper) => stepper.uneven);
 
 describe("cells in lanes", () => {
   it.each(fixed.map(({ id }) => [id]))("%s: digit for digit the scores of cells run alone", (id) => {
@@ -53,6 +78,23 @@ describe("cells in lanes", () => {
       expect(JSON.stringify(scores[i]), JSON.stringify(job)).toBe(JSON.stringify(scalar(job, measures)));
     });
   });
+
+  it.each(uneven.map((stepper) => [stepper.id, stepper] as const))(
+    "%s: digit for digit the scores of cells run alone, diverged ones left",
+    (_, stepper) => {
+      const jobs = unevenJobsOf(stepper);
+      // Twice, so that the group is worth compiling for.
+      const scores: Score[] = [];
+      const left = runInLanes([...jobs, ...jobs], stepperOf, every, scores);
+      expect(left.length).toBeLessThan(jobs.length / 2);
+      jobs.forEach((job, i) => {
+        if (i % 3 !== 1 && !left.includes(i)) return;
+        const alone = scalar(job, every);
+        if (left.includes(i)) expect(alone.ended.status).toBe("diverged");
+        else expect(JSON.stringify(scores[i]), JSON.stringify(job)).toBe(JSON.stringify(alone));
+      });
+    },
+  );
 
   it.each(MEASURES.map((name) => [name]))("%s by itself", (name) => {
     const measures = new Set([name]);

@@ -50,6 +50,7 @@ export const opcode = {
   i32LessUnsigned: [0x49],
   i32Add: [0x6a],
   i32Sub: [0x6b],
+  i32Multiply: [0x6c],
   i32And: [0x71],
   i32Or: [0x72],
   i32ShiftLeft: [0x74],

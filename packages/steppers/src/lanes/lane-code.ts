@@ -78,6 +78,12 @@ export class LaneCode {
     this.emit(opcode.localSet, unsigned(pointer.local));
   }
 
+  /** pointer = factor * count + base. */
+  setScaled(pointer: Pointer, count: Operand, factor: number, base: number): void {
+    this.emit(count.push, opcode.i32Const, signed(factor), opcode.i32Multiply);
+    this.emit(opcode.i32Const, signed(base), opcode.i32Add, opcode.localSet, unsigned(pointer.local));
+  }
+
   advance(pointer: Pointer, by: number): void {
     this.set(pointer, pointer, by);
   }

@@ -2,7 +2,8 @@
 
 // Choosing
 export { type Choice, LIMIT_KEYS, type LimitKey, type RankedStepper } from "./choose/choice.ts";
-export { type ChooseOptions, chooseStepper } from "./choose/choose-stepper.ts";
+export { type ChoiceRun, type ChooseOptions, chooseStepper } from "./choose/choose-stepper.ts";
+export { gatherEvidence } from "./choose/gather-evidence.ts";
 // Command line
 export { describeChoice } from "./cli/describe-choice.ts";
 export { buildProgram } from "./cli/program.ts";

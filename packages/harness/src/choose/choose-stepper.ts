@@ -106,17 +106,19 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
 
   const ranking: RankedStepper[] = [];
   const costs: number[] = [];
-  const worthRunning = (cost: number): boolean => {
+  const worthRunning = ({ candidate }: Tried, { fineness, evaluationsPerOrbit: cost }: Screened): boolean => {
     const cheaper = costs.toSorted((a, b) => a - b);
     const [best] = cheaper;
     const last = cheaper[RUN_IN_FULL - 1];
     if (best !== undefined && cost > best * WORTH_RUNNING) return false;
-    return last === undefined || cost * (1 - SCREENING_ERROR) <= last;
+    // At the coarsest setting allowed the cost cannot turn out lower.
+    const least = fineness <= candidate.knob.coarsest ? cost : cost * (1 - SCREENING_ERROR);
+    return last === undefined || least < last;
   };
   for (const { tried: entry, estimate } of hopeful) {
     const { candidate } = entry;
     const { id } = candidate.stepper;
-    if (!worthRunning(estimate.evaluationsPerOrbit)) {
+    if (!worthRunning(entry, estimate)) {
       ranking.push(rankedScreening(context, candidate, estimate));
       continue;
     }

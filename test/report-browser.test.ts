@@ -226,6 +226,12 @@ describe.skipIf(missing !== null)(`report in a browser${missing === null ? "" : 
     const page = await open("seven", 1280, "dark");
     await page.emulateMedia({ media: "print", colorScheme: "dark" });
     expect(await page.evaluate("getComputedStyle(document.body).backgroundColor")).toBe("rgb(252, 251, 248)");
+    // 182 mm between margins of 14 mm: tables stay tables and nothing is cut off at the right.
+    await page.setViewportSize({ width: 688, height: 900 });
+    expect(await page.evaluate("getComputedStyle(document.querySelector('main td')).display")).toBe(
+      "table-cell",
+    );
+    expect(await page.evaluate("document.documentElement.scrollWidth")).toBe(688);
     const pdf = await page.pdf({ format: "A4" });
     expect(pdf.subarray(0, 5).toString("latin1")).toBe("%PDF-");
     await page.context().close();

@@ -118,6 +118,11 @@ export const pageScript: string = String.raw`
     }).observe(drawing);
   };
 
+  // Paper cannot be unfolded: print shows what is folded away.
+  addEventListener("beforeprint", () => {
+    for (const folded of document.querySelectorAll("details")) if (!folded.closest(".legend")) folded.open = true;
+  });
+
   const drawAll = async () => {
     await document.fonts.ready;
     for (const chart of source.charts) {

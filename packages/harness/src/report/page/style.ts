@@ -72,7 +72,7 @@ figcaption{font-size:.88rem;line-height:1.5;margin-top:.5em;max-width:80ch}
 #tip{position:fixed;z-index:10;max-width:min(460px,calc(100vw - 24px));background:var(--paper);color:var(--ink);border:1px solid var(--ink);padding:8px 12px;font-size:.85rem;line-height:1.4;pointer-events:none;box-shadow:3px 3px 0 var(--rule)}
 #tip.held{pointer-events:auto}#tip[hidden]{display:none}
 #tip dl{margin:0}#tip div{display:grid;grid-template-columns:8.5em 1fr;gap:10px}#tip dt{font-weight:400;color:var(--soft)}
-@media (max-width:720px){
+@media screen and (max-width:720px){
 main{padding:0 16px 60px}
 thead{position:absolute;width:1px;height:1px;overflow:hidden;clip-path:inset(50%)}
 table,tbody,tr,th,td,caption{display:block;width:auto}
@@ -91,7 +91,8 @@ dl.why div,dl.facts-list div{grid-template-columns:1fr}
 @page{margin:14mm}
 body{font-size:10.5pt}main{max-width:none;padding:0}
 .contents,.skip,#tip,.chips .all{display:none}
-.legend{position:static}
+.legend{position:static}.legend details{display:none}
+table{font-size:8.5pt}thead th{font-size:8pt}th,td{padding:5px 8px 5px 0}.gauge svg{width:50px}td[data-heading^=binding]{min-width:7em}
 .figures,.figures.wide{grid-template-columns:repeat(2,minmax(0,1fr));gap:18px 20px}
 figure,tr{break-inside:avoid}h2,h3,h4{break-after:avoid}
 }

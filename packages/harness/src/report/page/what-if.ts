@@ -44,7 +44,7 @@ export function handOver(choice: Choice): Markup | null {
 <li>Run with ${formatNumber(test.stepSeconds, 5)} s and with half of it: at common times the two part by at most <b>${formatNumber(test.halfStepDifferenceKm)} km</b>.</li>
 <li>Run forward, reverse the velocities and run back: the end lies <b>${formatNumber(test.closureKm)} km</b> from the start.</li>
 </ul>
-<p>The same order of size shows that the integrator is the one measured here; a difference of a power of ten that it is not.</p>
+<p>Figures of the same size say that the production code steps like the stepper measured here; a power of ten between them has to be explained first.</p>
 ${choice.bodies === null ? null : bodyWords(choice.bodies)}</section>`;
 }
 

@@ -1,8 +1,10 @@
 import { availableParallelism } from "node:os";
 import { fileURLToPath } from "node:url";
 import { Piscina } from "piscina";
-import type { MeasureName, Score } from "../score/score.ts";
+import type { LongRun } from "../analyse/long-run.ts";
+import type { Cell, MeasureName, Score } from "../score/score.ts";
 import { type CellJob, type CellTask, runCellTask } from "./cell-task.ts";
+import { type LongRunTask, runLongRunTask } from "./long-run-task.ts";
 import { taskIndices } from "./task-indices.ts";
 
 /** What of each run is to be measured, for all jobs of a call alike. */
@@ -58,6 +60,21 @@ export class CellPool {
       }),
     );
     return scores;
+  }
+
+  /** Long runs, one to a thread; results in the order of the cells. */
+  async longRuns(cells: readonly Cell[]): Promise<LongRun[]> {
+    return Promise.all(
+      cells.map(async (cell) => {
+        const task: LongRunTask = { cell, ownFiles: this.ownFiles };
+        const run: LongRun =
+          this.pool === null ? await runLongRunTask(task) : await this.pool.run(task, { name: "longRun" });
+        this.stepsRun += run.score.steps;
+        this.cellsRun += 1;
+        this.onCells(1);
+        return run;
+      }),
+    );
   }
 
   async close(): Promise<void> {

@@ -2,5 +2,7 @@
 import { register } from "tsx/esm/api";
 
 register();
-const { default: run } = await import("./worker.ts");
+const { default: run, longRun } = await import("./worker.ts");
+
+export { longRun };
 export default run;

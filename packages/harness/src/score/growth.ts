@@ -26,7 +26,19 @@ export interface Growth {
   readonly growthExponent: number | null;
   readonly growthStandardError: number | null;
 }
-const NONE: Growth = { growthExponent: null, growthStandardError: null };
+
+/** A growth exponent with the number of orbits behind it, or why there is none. */
+export interface GrowthJudgement extends Growth {
+  readonly points: number;
+  readonly reason: string | null;
+}
+
+const none = (points: number, reason: string): GrowthJudgement => ({
+  growthExponent: null,
+  growthStandardError: null,
+  points,
+  reason,
+});
 
 /** Values at 25 orbits spaced evenly in log time over [K/32, K], kept as the orbits complete. */
 export class GrowthSamples {
@@ -55,12 +67,16 @@ export class GrowthSamples {
    * where that exceeds 0.1, the value changes sign or vanishes, the start of the window lies within 20 times the rounding floor, or the
    * run was shorter than 64 orbits or ended early.
    */
-  growth(floor: RoundingFloor): Growth {
+  judge(floor: RoundingFloor): GrowthJudgement {
     const { orbits, values } = this;
-    if (orbits.length < 8 || orbits.at(-1) !== this.total) return NONE;
+    const n = orbits.length;
+    if (this.total < GROWTH_MINIMUM_ORBITS) return none(n, `fewer than ${GROWTH_MINIMUM_ORBITS} orbits`);
+    if (n < 8 || orbits.at(-1) !== this.total) return none(n, "the run ended early");
+    if (Math.abs(values[0]!) < FLOOR_MARGIN * floor(orbits[0]!)) {
+      return none(n, `starts within ${FLOOR_MARGIN} times the rounding floor`);
+    }
     const sign = Math.sign(values[0]!);
-    if (sign === 0 || values.some((value) => Math.sign(value) !== sign)) return NONE;
-    if (Math.abs(values[0]!) < FLOOR_MARGIN * floor(orbits[0]!)) return NONE;
+    if (sign === 0 || values.some((value) => Math.sign(value) !== sign)) return none(n, "changes sign");
     const points = orbits.map((orbit, i): [number, number] => [
       Math.log(orbit - 0.5),
       Math.log(Math.abs(values[i]!)),
@@ -69,7 +85,14 @@ export class GrowthSamples {
     const early = linearRegression(points.slice(0, middle + 1)).m;
     const late = linearRegression(points.slice(middle)).m;
     const growthStandardError = Math.abs(late - early) / 2;
-    if (growthStandardError > LARGEST_STANDARD_ERROR) return NONE;
-    return { growthExponent: linearRegression(points).m, growthStandardError };
+    if (growthStandardError > LARGEST_STANDARD_ERROR) {
+      return none(n, `not one power of time (standard error above ${LARGEST_STANDARD_ERROR})`);
+    }
+    return { growthExponent: linearRegression(points).m, growthStandardError, points: n, reason: null };
+  }
+
+  growth(floor: RoundingFloor): Growth {
+    const { growthExponent, growthStandardError } = this.judge(floor);
+    return { growthExponent, growthStandardError };
   }
 }

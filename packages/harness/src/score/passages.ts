@@ -17,6 +17,12 @@ export interface PassageReference {
   readonly startY: number;
 }
 
+/** A numerical passage: when it was, in orbits since the start, and its lateness as a fraction of the period. */
+export interface ObservedPassage {
+  readonly atOrbit: number;
+  readonly timing: number;
+}
+
 /**
  * Periapsis passages, numerical against exact, counted and never matched by nearness.
  *
@@ -40,8 +46,16 @@ export class Passages {
   private count = 0;
   private readonly timing: PassageSummary;
   private readonly period: PassageSummary;
+  private readonly observe: ((passage: ObservedPassage) => void) | undefined;
 
-  constructor(reference: PassageReference, start: Float64Array, wholeOrbits: number, detailed: boolean) {
+  constructor(
+    reference: PassageReference,
+    start: Float64Array,
+    wholeOrbits: number,
+    detailed: boolean,
+    observe?: (passage: ObservedPassage) => void,
+  ) {
+    this.observe = observe;
     this.reference = reference;
     this.detailed = detailed;
     this.previous.set(start.subarray(0, 4));
@@ -157,6 +171,7 @@ export class Passages {
     this.timing.accept(timing, orbit, atOrbit, this.detailed);
     if (this.lastTiming !== null) this.period.accept(timing - this.lastTiming, orbit, atOrbit, this.detailed);
     this.lastTiming = timing;
+    this.observe?.({ atOrbit, timing });
   }
 
   private timeToPassage(state: Float64Array): number {

@@ -8,7 +8,7 @@ import { displacementErrors } from "./displacement-errors.ts";
 import { angleFloor, energyFloor, type RoundingFloor } from "./growth.ts";
 import { angularMomentumErrors, energyErrors } from "./invariant-errors.ts";
 import { Maximum } from "./maximum.ts";
-import { Passages } from "./passages.ts";
+import { type ObservedPassage, Passages } from "./passages.ts";
 import { PhaseErrors } from "./phase-errors.ts";
 import { type DivergenceReason, findEnd } from "./run-end.ts";
 import {
@@ -36,6 +36,8 @@ export interface ScoringPlan {
   readonly horizons: readonly number[];
   /** Called after each chunk with rows `from` to `to`: for histories of a run. Errors are indexed by row. */
   readonly observe?: (window: ObservedWindow) => void;
+  /** Called at each passage, before `observe` sees the chunk it falls in; only where `period` or `timing` is measured. */
+  readonly observePassage?: (passage: ObservedPassage) => void;
 }
 
 export interface ObservedWindow {
@@ -135,7 +137,7 @@ export class RunScorer {
       startY: start[1]!,
     };
     this.passages = wantsPassages
-      ? new Passages(reference, start, this.wholeOrbits, plan.summaries === "all")
+      ? new Passages(reference, start, this.wholeOrbits, plan.summaries === "all", plan.observePassage)
       : null;
     this.lastState.set(start);
   }

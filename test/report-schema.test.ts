@@ -15,7 +15,7 @@ describe("chart specifications", () => {
     const schema = JSON.parse(readFileSync(require.resolve("vega-lite/vega-lite-schema.json"), "utf8"));
     const ajv = new Ajv({ strict: false, allowUnionTypes: true, validateFormats: false });
     valid = ajv.compile(schema);
-  });
+  }, 60_000);
 
   it.each([
     ["seven steppers", {}],

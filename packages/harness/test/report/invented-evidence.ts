@@ -255,6 +255,7 @@ function errorsOf(stepper: string, margin: number): LimitErrors {
           startAnomalyDeg: 30 * index,
           atOrbit: withinDays === null ? 246.5 : 28.75,
           withinDays,
+          uncertaintyFactor: 1,
           command: `perigauge score --stepper ${stepper} --eccentricity ${eccentricity} --steps-per-orbit 700.1234567890123 --orbits 247 --start ${30 * index}`,
         },
       ];

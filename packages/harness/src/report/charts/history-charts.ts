@@ -4,20 +4,13 @@ import type { Chart } from "../chart.ts";
 import type { ChoiceEvidence, History } from "../evidence.ts";
 import { colour } from "../look/palette.ts";
 import type { Looks } from "../look/stepper-look.ts";
-import { formatNumber, formatTimes } from "../text/number.ts";
+import { formatNumber } from "../text/number.ts";
 import { dayWords, durationWords, listWords } from "../text/words.ts";
+import { growthFinding, type HistoryMeasure, trackFinding } from "./history-findings.ts";
 import { HOVER_MARKS } from "./hover-marks.ts";
 import { type Layer, makeChart, type Row } from "./make-chart.ts";
 
-interface Measure {
-  readonly field: "energyRelative" | "phaseRad" | "alongTrackKm";
-  readonly name: string;
-  readonly words: string;
-  readonly axisTitle: string;
-  readonly unit: string;
-}
-
-const MEASURES: readonly Measure[] = [
+const MEASURES: readonly HistoryMeasure[] = [
   {
     field: "energyRelative",
     name: "energy-over-time",
@@ -102,7 +95,7 @@ function lines(
   x: Quantity,
   y: Quantity,
   looks: Looks,
-  measure: Measure,
+  measure: HistoryMeasure,
 ): Layer[] {
   const colours = histories.map((history) => {
     const look = looks.highlighted.find((candidate) => candidate.stepper === history.stepper);
@@ -212,46 +205,6 @@ function labelsOf(histories: readonly History[]): string[] {
   });
 }
 
-/** Between these ratios of end to start an error counts as level. */
-const LEVEL = [0.8, 1.25] as const;
-
-function growthFinding(evidence: ChoiceEvidence, measure: Measure): string {
-  const grows: string[] = [];
-  const falls: string[] = [];
-  const level: string[] = [];
-  for (const { points, stepper } of evidence.histories) {
-    const drawn = points.filter((point) => point[measure.field] > 0);
-    const [first, last] = [drawn[0], drawn.at(-1)];
-    if (first === undefined || last === undefined || first === last) continue;
-    const ratio = last[measure.field] / first[measure.field];
-    if (ratio >= LEVEL[0] && ratio <= LEVEL[1]) level.push(stepper);
-    else if (ratio > 1) grows.push(`${formatTimes(ratio)} times for ${stepper}`);
-    else falls.push(`${formatTimes(1 / ratio)} times for ${stepper}`);
-  }
-  const parts = [
-    ...(grows.length > 0 ? [`grows ${listWords(grows)}`] : []),
-    ...(falls.length > 0 ? [`falls ${listWords(falls)}`] : []),
-    ...(level.length > 0 ? [`stays level for ${listWords(level)}`] : []),
-  ];
-  const from = evidence.histories[0]?.points[0]?.days ?? 0;
-  return `From day ${formatNumber(from, 2)} to the end the ${measure.words} ${parts.join("; it ")}`;
-}
-
-function trackFinding(evidence: ChoiceEvidence, measure: Measure): string {
-  const whole = evidence.choice.scenario.limits.find(
-    (limit) => limit.alongTrackKm !== undefined && limit.withinDays === undefined,
-  )?.alongTrackKm;
-  const parts = evidence.histories.map((history) => {
-    const most = Math.max(...history.points.map((point) => point[measure.field]));
-    const broken =
-      whole === undefined ? undefined : history.points.find((point) => point.alongTrackKm > whole);
-    if (broken !== undefined)
-      return `${history.stepper} passes the limit by day ${formatNumber(broken.days, 2)}`;
-    return `${history.stepper} stays within ${formatNumber(most, 2)} km`;
-  });
-  return `Along the track ${listWords(parts)}${whole === undefined ? "" : ` (limit ${formatNumber(whole)} km)`}`;
-}
-
 /** The cells drawn, once where all are of one orbit and start. */
 function caseWords(histories: readonly History[]): string {
   const cells = histories.map(
@@ -262,7 +215,7 @@ function caseWords(histories: readonly History[]): string {
   return `Cells drawn: ${histories.map((history, index) => `${history.stepper}, ${cells[index] ?? ""}`).join("; ")}.`;
 }
 
-function endWords(history: History, measure: Measure): string {
+function endWords(history: History, measure: HistoryMeasure): string {
   const last = history.points.at(-1);
   if (last === undefined) return "no data";
   return `${formatNumber(last[measure.field])}${measure.unit} on day ${formatNumber(last.days)}`;

@@ -8,6 +8,7 @@ import {
   describeCharts,
   describeChoice,
   scenarioJsonSchema,
+  studyJsonSchema,
   toSvg,
 } from "perigauge";
 
@@ -22,6 +23,10 @@ const generated: readonly { readonly path: string; readonly content: () => Promi
   {
     path: "packages/harness/schemas/scenario.schema.json",
     content: async () => `${JSON.stringify(scenarioJsonSchema(), null, 2)}\n`,
+  },
+  {
+    path: "packages/harness/schemas/study.schema.json",
+    content: async () => `${JSON.stringify(studyJsonSchema(), null, 2)}\n`,
   },
   ...PICTURES.map((name) => ({
     path: `reports/demo/${name}.svg`,

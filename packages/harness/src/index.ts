@@ -1,4 +1,11 @@
-// Scenarios
+// Analyses
+export { type LongRun, longRun } from "./analyse/long-run.ts";
+export {
+  type ObservedOrder,
+  type OrderResult,
+  type OrderStudy,
+  observeOrders,
+} from "./analyse/observed-orders.ts";
 
 // Choosing
 export { type Choice, LIMIT_KEYS, type LimitKey, type RankedStepper } from "./choose/choice.ts";
@@ -37,3 +44,9 @@ export {
   type Score,
   type Summation,
 } from "./score/score.ts";
+// Sweeps
+export { gridCells, type Shard, shardOf } from "./sweep/grid.ts";
+export { parseStudy, readStudy } from "./sweep/parse-study.ts";
+export { runSweep, type SweepResult } from "./sweep/run-sweep.ts";
+export { listValues, type Study, type Values } from "./sweep/study.ts";
+export { studyJsonSchema } from "./sweep/study-schema.ts";

@@ -38,8 +38,8 @@ const open = (explanation: string): ExpectedOrder => ({
  *   (E. Hairer, C. Lubich, G. Wanner, Geometric Numerical Integration, 2nd ed., Springer 2006, ch. IX and XI).
  * - Symplectic, odd p: the term of order p of the modified energy averages out over an orbit that starts at an apsis, so what is
  *   taken at passages shows p + 1; largest values within an orbit show p.
- * - Others, odd p: p in all but the apsis, which shows p + 1. Even p: the secular energy change is of order p + 1, and what follows from
- *   it lies between p and p + 1; the apsis shows p.
+ * - Others, odd p: p in all but the apsis, which shows p + 1. Even p: the secular energy change is of order p + 1; errors of order
+ *   p beside it may be the smaller part, so that orders up to p + 1 are seen over one orbit; the apsis shows p.
  */
 export function expectedOrder(
   stepper: StepperInfo,
@@ -126,7 +126,14 @@ function evenOther(measure: OrderMeasure, p: number, orbits: number): ExpectedOr
       return between(p, p + 1, "an oscillation of order p beside a secular change of order p + 1");
     default:
       return orbits <= 1
-        ? between(p, p + 1, "an error of order p beside what the secular energy change of order p + 1 brings")
+        ? {
+            ...between(
+              p,
+              p + 1,
+              "an error of order p beside what the secular energy change of order p + 1 brings",
+            ),
+            expectedOrder: p,
+          }
         : open(
             "errors of order p and p + 1 grow at different rates, so the order seen depends on the length of the run",
           );

@@ -1,10 +1,13 @@
 import { Command } from "commander";
 import { version } from "../version.ts";
 import { chooseVerb } from "./choose-verb.ts";
+import { convergeVerb } from "./converge-verb.ts";
 import { exactVerb } from "./exact-verb.ts";
+import { longRunVerb } from "./long-run-verb.ts";
 import type { Outcome } from "./run-command-line.ts";
 import { scoreVerb } from "./score-verb.ts";
 import { steppersVerb } from "./steppers-verb.ts";
+import { sweepVerb } from "./sweep-verb.ts";
 
 /** The command line: one verb a file. */
 export function buildProgram(outcome: Outcome): Command {
@@ -18,7 +21,8 @@ export function buildProgram(outcome: Outcome): Command {
       "after",
       "\nExit codes: 0 every limit held; 1 a limit exceeded or none qualifies; 2 wrong input; 3 stopped.",
     );
-  for (const verb of [chooseVerb, scoreVerb, exactVerb, steppersVerb]) program.addCommand(verb(outcome));
+  for (const verb of [chooseVerb, scoreVerb, sweepVerb, convergeVerb, longRunVerb, exactVerb, steppersVerb])
+    program.addCommand(verb(outcome));
   for (const command of program.commands) command.copyInheritedSettings(program);
   return program;
 }

@@ -17,8 +17,18 @@ export function cautionsOf(
   { fleet, scenario }: ChoiceContext,
   winner: RankedStepper | null,
   ranking: readonly RankedStepper[],
+  beyondBudget: readonly string[],
 ): string[] {
   const lines: string[] = [];
+  if (winner?.evidence === "extrapolated") {
+    lines.push(
+      "The choice itself is EXTRAPOLATED: its errors come from runs of at most 60 orbits, carried on by their growth law. Give more time (--minutes) to run it in full before relying on it.",
+    );
+  } else if (beyondBudget.length > 0) {
+    lines.push(
+      `Not run in full because the budget was spent (--minutes): ${beyondBudget.slice(0, 5).join(", ")}${beyondBudget.length > 5 ? ` and ${beyondBudget.length - 5} more` : ""}.`,
+    );
+  }
   const ends = corners(fleet);
   const eccentricity = Math.max(...ends.map((point) => point.eccentricity));
   if (winner?.stepsPerOrbit != null) {

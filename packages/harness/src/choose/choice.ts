@@ -27,6 +27,8 @@ export interface LimitError {
   /** When the worst value was met, in orbits since the start. */
   readonly atOrbit: number;
   readonly withinDays: number | null;
+  /** Of an extrapolated value: it may be this many times larger, should growth turn to the steepest that theory allows. 1 for a run. */
+  readonly uncertaintyFactor: number;
   /** The command that measures this cell again. */
   readonly command: string;
 }

@@ -2,6 +2,7 @@ import { findStepper, type Stepper, type StepperInfo } from "@perigauge/steppers
 import type { CellPool } from "../run/cell-pool.ts";
 import type { Scenario } from "../scenario/scenario.ts";
 import { threeDigits } from "../text/numbers.ts";
+import { STEPS_PER_MINUTE, stepsInFull } from "./budget.ts";
 import { type Candidate, type ChoiceContext, makeCandidate } from "./candidate.ts";
 import { cautionsOf } from "./cautions.ts";
 import type { BodyErrors, Choice, CurrentChoice, ExcludedStepper, RankedStepper } from "./choice.ts";
@@ -29,6 +30,8 @@ export interface ChooseOptions {
   /** Candidates; steppers of one's own among them. */
   readonly steppers: readonly Stepper[];
   readonly seed: number;
+  /** Work to spend, in minutes of two nominal cores; what does not fit is extrapolated. Default 2. */
+  readonly minutes?: number;
   readonly version: string;
   readonly command: string;
   readonly now: () => number;
@@ -52,6 +55,7 @@ const WORTH_RUNNING = 3.5;
 /** ... nor are those that come after so many cheaper ones that were; the screened cost is good to about this share. */
 const RUN_IN_FULL = 5;
 const SCREENING_ERROR = 0.12;
+const DEFAULT_MINUTES = 2;
 /** A screened cost this far above a cap on evaluations excludes without a run in full; nearer, the run decides. */
 const CERTAINLY_OVER = 1.3;
 
@@ -105,6 +109,8 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
   hopeful.sort((a, b) => a.estimate.evaluationsPerOrbit - b.estimate.evaluationsPerOrbit);
 
   const ranking: RankedStepper[] = [];
+  const budget = (options.minutes ?? DEFAULT_MINUTES) * STEPS_PER_MINUTE;
+  const beyondBudget: string[] = [];
   const costs: number[] = [];
   const worthRunning = ({ candidate }: Tried, { fineness, evaluationsPerOrbit: cost }: Screened): boolean => {
     const cheaper = costs.toSorted((a, b) => a - b);
@@ -118,7 +124,9 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
   for (const { tried: entry, estimate } of hopeful) {
     const { candidate } = entry;
     const { id } = candidate.stepper;
-    if (!worthRunning(entry, estimate)) {
+    const affordable = pool.stepsRun + stepsInFull(context, candidate, estimate) <= budget;
+    if (!affordable) beyondBudget.push(id);
+    if (!affordable || !worthRunning(entry, estimate)) {
       ranking.push(rankedScreening(context, candidate, estimate));
       continue;
     }
@@ -148,7 +156,8 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
   }
   ranking.sort((a, b) => rankKey(a) - rankKey(b) || a.stepper.localeCompare(b.stepper));
   const explained = explainRanking(ranking);
-  const winner = explained.find((entry) => entry.evidence === "run") ?? null;
+  // Where nothing could be run in full within the budget, the cheapest of the screened is the answer, and says that it is extrapolated.
+  const winner = explained.find((entry) => entry.evidence === "run") ?? explained[0] ?? null;
 
   let current: CurrentChoice | null = null;
   if (scenario.current !== undefined) {
@@ -175,7 +184,7 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
     handOver:
       winner === null || winnerStepper === undefined ? null : handOver(context, winnerStepper, winner),
     bodies: bodiesOf(scenario),
-    cautions: cautionsOf(context, winner, explained),
+    cautions: cautionsOf(context, winner, explained, beyondBudget),
   } as const;
   const choice: Choice = {
     ...body,

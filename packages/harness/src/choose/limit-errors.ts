@@ -21,7 +21,10 @@ export function limitErrors(limits: readonly Limit[], readings: readonly Reading
 /** The same from a screening, whose values are extrapolated from the short runs named. */
 export function screenedErrors(worst: readonly ScreenedLimit[]): LimitErrors {
   return Object.fromEntries(
-    worst.map(({ limit, value, reading }) => [limit.id, entry(limit, reading, value, reading.cell.orbits)]),
+    worst.map(({ limit, value, reading, uncertaintyFactor }) => [
+      limit.id,
+      { ...entry(limit, reading, value, reading.cell.orbits), uncertaintyFactor },
+    ]),
   );
 }
 
@@ -37,6 +40,7 @@ function entry(limit: Limit, { sample, cell }: Reading, value: number, atOrbit: 
     startAnomalyDeg,
     atOrbit,
     withinDays: limit.withinDays,
+    uncertaintyFactor: 1,
     command: scoreCommand(cell, horizon === null || horizon >= cell.orbits ? null : horizon),
   };
 }

@@ -1,3 +1,4 @@
+import type { StepperInfo } from "@perigauge/steppers";
 import type { Cell } from "../score/score.ts";
 import type { Candidate, ChoiceContext } from "./candidate.ts";
 import { corners, daysToSeconds, type FleetPoint, orbitsOf, pointAt } from "./fleet.ts";
@@ -19,6 +20,7 @@ export interface ScreenedLimit {
   readonly limit: Limit;
   readonly value: number;
   readonly reading: Reading;
+  readonly uncertaintyFactor: number;
 }
 
 export interface Screening {
@@ -97,12 +99,28 @@ function carriedOn(from: Screened, factor: number, designFactor: number): Screen
   return { ...from, fineness: from.fineness * factor, evaluationsPerOrbit, ratio: 1 / designFactor };
 }
 
+/** How many times larger an extrapolated value would be with the steepest growth that theory allows. */
+function steepestOver(
+  { measurer }: ChoiceContext,
+  stepper: StepperInfo,
+  limit: Limit,
+  { sample, cell, limits }: Reading,
+  value: number,
+): number {
+  const seconds = limit.withinDays === null ? measurer.durationSeconds : daysToSeconds(limit.withinDays);
+  const short = limits[measurer.limits.indexOf(limit)]?.value ?? 0;
+  const steepest = steepestGrowth(stepper, limit.key);
+  const largest = short * Math.max(1, orbitsOf(sample.point, seconds) / cell.orbits) ** steepest;
+  return value > 0 && Number.isFinite(largest) ? Math.max(1, largest / value) : 1;
+}
+
 async function screenAt(
-  { scenario, fleet, measurer }: ChoiceContext,
+  context: ChoiceContext,
   { stepper, knob }: Candidate,
   fineness: number,
   wantedOrbits: number,
 ): Promise<Screened> {
+  const { scenario, fleet, measurer } = context;
   const samples = screeningSamples(
     corners(fleet),
     (index) => pointAt(fleet, index, 0.9, 0.9),
@@ -128,7 +146,13 @@ async function screenAt(
       return extrapolate(half, value, run, wanted, steepestGrowth(stepper, limit.key));
     });
     const at = values.reduce((best, value, k) => (value > (values[best] as number) ? k : best), 0);
-    return { limit, value: values[at] as number, reading: readings[at] as Reading };
+    const reading = readings[at] as Reading;
+    return {
+      limit,
+      value: values[at] as number,
+      reading,
+      uncertaintyFactor: steepestOver(context, stepper, limit, reading, values[at] as number),
+    };
   });
   return {
     fineness,

@@ -13,7 +13,7 @@ import { readScenario } from "../scenario/parse-scenario.ts";
 import type { Scenario } from "../scenario/scenario.ts";
 import { version } from "../version.ts";
 import { describeChoice } from "./describe-choice.ts";
-import { options, wholePositive } from "./options.ts";
+import { options, positive, wholePositive } from "./options.ts";
 import { startProgress } from "./progress.ts";
 import { EXIT, type Outcome } from "./run-command-line.ts";
 
@@ -23,6 +23,7 @@ interface ChooseOptions {
   readonly json?: true;
   readonly workers?: number;
   readonly seed: number;
+  readonly minutes: number;
   readonly quiet?: true;
 }
 
@@ -41,6 +42,14 @@ export function chooseVerb(outcome: Outcome): Command {
     .addOption(options.json())
     .addOption(options.workers())
     .addOption(new Option("--seed <n>", "seed of the random checks").argParser(wholePositive).default(1))
+    .addOption(
+      new Option(
+        "--minutes <m>",
+        "work to spend, in minutes of two nominal cores; what does not fit is extrapolated",
+      )
+        .argParser(positive)
+        .default(2),
+    )
     .addOption(options.quiet())
     .action(async (file: string | undefined, given: ChooseOptions) => {
       const scenario = await readScenario(file ?? DEMO);
@@ -60,6 +69,7 @@ export function chooseVerb(outcome: Outcome): Command {
           pool,
           steppers,
           seed: given.seed,
+          minutes: given.minutes,
           version,
           command: commandLine(file, given),
           now: () => performance.now(),
@@ -97,5 +107,5 @@ function candidates(scenario: Scenario, own: readonly Stepper[]): Stepper[] {
 
 function commandLine(file: string | undefined, given: ChooseOptions): string {
   const own = given.own.map((path) => ` --own ${path}`).join("");
-  return `perigauge choose${file === undefined ? "" : ` ${file}`}${own}${given.seed === 1 ? "" : ` --seed ${given.seed}`}`;
+  return `perigauge choose${file === undefined ? "" : ` ${file}`}${own}${given.seed === 1 ? "" : ` --seed ${given.seed}`}${given.minutes === 2 ? "" : ` --minutes ${given.minutes}`}`;
 }

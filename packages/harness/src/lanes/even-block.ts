@@ -6,7 +6,7 @@ import type { StepRun } from "./step-run.ts";
 /** A block of runs of equal steps in time: all lanes advance to the nearest stop of any. */
 export class EvenBlock extends LaneBlock<StepRun> {
   protected settle(count: number, width: number): void {
-    this.machine.track(count, width);
+    if (this.tracks) this.machine.track(count, width);
     if (this.score(0, count, width) !== 0) this.reportPassages(0, count);
     this.lanes.forEach((run, lane) => {
       const { steps, alive } = this.scored(lane);

@@ -17,6 +17,9 @@ import {
   trackRows,
 } from "./memory-map.ts";
 
+const trackEntries = Object.entries(trackRows);
+const scoreEntries = Object.entries(scoreRows) as readonly [keyof typeof scoreRows, number][];
+
 /** Doubles of a row. */
 const ROW = STATE_BYTES / 32;
 
@@ -33,6 +36,8 @@ export interface BlockSetting {
   readonly kernel: BlockKernel;
   readonly score: (from: number, count: number, width: number) => number;
   readonly queue: Iterator<LaneRun>;
+  /** Whether any measure compares with the exact states. */
+  readonly tracks: boolean;
   /** Scores are written to the places of their runs. */
   readonly scores: Score[];
 }
@@ -45,6 +50,7 @@ export abstract class LaneBlock<Run extends LaneRun> {
   protected readonly machine: LaneMachine;
   protected readonly kernel: BlockKernel;
   protected readonly score: BlockSetting["score"];
+  protected readonly tracks: boolean;
   protected readonly lanes: Run[] = [];
   protected readonly scores: Score[];
   protected readonly state: Float64Array = new Float64Array(4);
@@ -52,11 +58,19 @@ export abstract class LaneBlock<Run extends LaneRun> {
   private readonly exact = new Float64Array(4);
   private generation: number;
 
-  constructor({ machine, kernel, score, queue, scores }: BlockSetting & { readonly queue: Iterator<Run> }) {
+  constructor({
+    machine,
+    kernel,
+    score,
+    queue,
+    tracks,
+    scores,
+  }: BlockSetting & { readonly queue: Iterator<Run> }) {
     this.machine = machine;
     this.kernel = kernel;
     this.score = score;
     this.queue = queue;
+    this.tracks = tracks;
     this.scores = scores;
     this.generation = machine.tables.generation;
   }
@@ -98,7 +112,7 @@ export abstract class LaneBlock<Run extends LaneRun> {
       doubles[EXACT_AT / 8 + c * ROW + lane] = value;
     });
     const track: Readonly<Record<string, unknown>> = { ...run.track, ...this.trackValues(run) };
-    for (const [name, offset] of Object.entries(trackRows)) {
+    for (const [name, offset] of trackEntries) {
       const value = track[name];
       if (typeof value === "number") doubles[offset / 8 + lane] = value;
     }
@@ -128,8 +142,7 @@ export abstract class LaneBlock<Run extends LaneRun> {
       inverse: 0,
       momentum: 0,
     };
-    for (const [name, offset] of Object.entries(scoreRows))
-      doubles[offset / 8 + lane] = values[name as keyof typeof values];
+    for (const [name, offset] of scoreEntries) doubles[offset / 8 + lane] = values[name];
     for (const offset of Object.values(maximumRows)) doubles[offset / 8 + lane] = -1;
     for (const offset of Object.values(maximumAtRows)) doubles[offset / 8 + lane] = 0;
     this.setAlive(lane, true);

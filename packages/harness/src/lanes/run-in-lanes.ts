@@ -14,8 +14,10 @@ import { UnevenBlock } from "./uneven-block.ts";
 /** Steps of a group that repay the compilation of its stepper's kernel. */
 const WORTH_COMPILING = 50_000;
 
+/** Measures that compare with the exact states at the same times. */
+const TRACKED = ["phase", "position", "alongTrack", "radial", "period", "timing"] as const;
+
 let machine: LaneMachine | null | undefined;
-let noted = false;
 
 interface Member {
   readonly index: number;
@@ -87,6 +89,7 @@ function runGroup(members: readonly Member[], measures: ReadonlySet<MeasureName>
   const setting = {
     machine: lanes,
     kernel: code.kernel,
+    tracks: TRACKED.some((name) => measures.has(name)),
     score: (from: number, count: number, width: number) => score(from, count, width),
     scores,
   };
@@ -118,11 +121,5 @@ function stepMeasures(measures: ReadonlySet<MeasureName>, circular: boolean): Se
 
 function theMachine(): LaneMachine | null {
   if (machine === undefined) machine = lanesAvailable() ? new LaneMachine() : null;
-  if (machine === null && !noted) {
-    noted = true;
-    process.stderr.write(
-      "note: this host has no WebAssembly vectors; cells run one by one, several times slower\n",
-    );
-  }
   return machine;
 }

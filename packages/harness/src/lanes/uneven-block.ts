@@ -16,7 +16,7 @@ export class UnevenBlock extends LaneBlock<LaneRun> {
   readonly left: number[] = [];
 
   protected settle(count: number, width: number): void {
-    this.machine.trackTimes(count, width);
+    if (this.tracks) this.machine.trackTimes(count, width);
     for (let from = 0; from < count; ) {
       const to = this.keepHorizons(from, count);
       if (to > from && this.score(from, to - from, width) !== 0) this.reportPassages(from, to);

@@ -2,6 +2,7 @@ import { availableParallelism } from "node:os";
 import { fileURLToPath } from "node:url";
 import { Piscina } from "piscina";
 import type { LongRun } from "../analyse/long-run.ts";
+import { noteFallback } from "../lanes/fallback-note.ts";
 import type { Cell, MeasureName, Score } from "../score/score.ts";
 import { type CellJob, type CellTask, runCellTask } from "./cell-task.ts";
 import { type LongRunTask, runLongRunTask } from "./long-run-task.ts";
@@ -29,10 +30,12 @@ export class CellPool {
   private readonly onCells: (finished: number) => void;
   cellsRun = 0;
   stepsRun = 0;
+  evaluationsRun = 0;
 
   constructor(options: PoolOptions = {}) {
     const workers = options.workers ?? availableParallelism();
     this.workers = workers;
+    noteFallback();
     this.ownFiles = options.ownFiles ?? [];
     this.onCells = options.onCells ?? (() => undefined);
     this.pool =
@@ -54,6 +57,7 @@ export class CellPool {
           const score = done[k] as Score;
           scores[index] = score;
           this.stepsRun += score.steps;
+          this.evaluationsRun += score.evaluations;
         });
         this.cellsRun += indices.length;
         this.onCells(indices.length);

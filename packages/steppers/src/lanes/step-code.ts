@@ -34,11 +34,15 @@ export function stepCode(program: Program): FunctionCode {
   const overLanes = (body: () => void): void => {
     code.set(places.lane, 0);
     code.set(places.stream, stream);
-    code.set(places.from, carriedIn);
-    code.set(places.to, carriedOut);
-    code.repeat(places.lane, width, () => {
+    if (carries) {
+      code.set(places.from, carriedIn);
+      code.set(places.to, carriedOut);
+    }
+    const { lane, stream: place, from, to } = places;
+    code.repeat(lane, width, () => {
       body();
-      for (const pointer of Object.values(places)) code.advance(pointer, PAIR_BYTES);
+      for (const pointer of carries ? [lane, place, from, to] : [lane, place])
+        code.advance(pointer, PAIR_BYTES);
     });
   };
 

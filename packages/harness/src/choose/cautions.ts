@@ -49,6 +49,11 @@ export function cautionsOf(
       );
     }
   }
+  if (winner?.stepper === "logarithmic-leapfrog") {
+    lines.push(
+      "logarithmic-leapfrog follows the two-body path exactly and errs in time only: energy and apsis limits say nothing about it here, and perturbed motion will not flatter it so.",
+    );
+  }
   if (winner?.tolerance != null && scenario.step?.multipleOfSeconds !== undefined) {
     lines.push(
       "A variable-step stepper does not step on the grid of the scenario; output on the grid needs interpolation.",

@@ -2,7 +2,7 @@ import { findStepper, type Stepper, type StepperInfo } from "@perigauge/steppers
 import type { CellPool } from "../run/cell-pool.ts";
 import type { Scenario } from "../scenario/scenario.ts";
 import { threeDigits } from "../text/numbers.ts";
-import { STEPS_PER_MINUTE, stepsInFull } from "./budget.ts";
+import { WORK_PER_MINUTE, workInFull, workOf } from "./budget.ts";
 import { type Candidate, type ChoiceContext, makeCandidate } from "./candidate.ts";
 import { cautionsOf } from "./cautions.ts";
 import type { BodyErrors, Choice, CurrentChoice, ExcludedStepper, RankedStepper } from "./choice.ts";
@@ -109,7 +109,7 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
   hopeful.sort((a, b) => a.estimate.evaluationsPerOrbit - b.estimate.evaluationsPerOrbit);
 
   const ranking: RankedStepper[] = [];
-  const budget = (options.minutes ?? DEFAULT_MINUTES) * STEPS_PER_MINUTE;
+  const budget = (options.minutes ?? DEFAULT_MINUTES) * WORK_PER_MINUTE;
   const beyondBudget: string[] = [];
   const costs: number[] = [];
   const worthRunning = ({ candidate }: Tried, { fineness, evaluationsPerOrbit: cost }: Screened): boolean => {
@@ -124,7 +124,8 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
   for (const { tried: entry, estimate } of hopeful) {
     const { candidate } = entry;
     const { id } = candidate.stepper;
-    const affordable = pool.stepsRun + stepsInFull(context, candidate, estimate) <= budget;
+    const affordable =
+      workOf(pool.stepsRun, pool.evaluationsRun) + workInFull(context, candidate, estimate) <= budget;
     if (!affordable) beyondBudget.push(id);
     if (!affordable || !worthRunning(entry, estimate)) {
       ranking.push(rankedScreening(context, candidate, estimate));

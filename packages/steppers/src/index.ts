@@ -39,15 +39,9 @@ export type { PairStepper } from "./run/variable-step.ts";
 // Blocks of trajectories in vector lanes.
 
 export { type AttemptKernel, attemptKernel } from "./lanes/attempt-kernel.ts";
+export { compileLanes } from "./lanes/compile-lanes.ts";
 export type { FunctionCode } from "./lanes/encoder.ts";
-export {
-  compileLanes,
-  LANES,
-  LaneCode,
-  type Operand,
-  PAIR_BYTES,
-  type Pointer,
-  ROW_BYTES,
-} from "./lanes/lane-code.ts";
+export { LaneCode } from "./lanes/lane-code.ts";
+export { LANES, type Operand, PAIR_BYTES, type Pointer, ROW_BYTES } from "./lanes/lane-layout.ts";
 export { lanesAvailable, type StepKernel, stepKernel } from "./lanes/step-kernel.ts";
 export { type KernelFunction, type LaneMemory, laneMemory } from "./lanes/web-assembly.ts";

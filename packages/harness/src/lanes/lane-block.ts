@@ -1,6 +1,6 @@
 import { cellSize } from "@perigauge/kepler";
 import { LANES } from "@perigauge/steppers";
-import { COLLISION_SHARE, type DivergenceReason } from "../score/run-end.ts";
+import type { DivergenceReason } from "../score/run-end.ts";
 import type { Score, StepMeasure } from "../score/score.ts";
 import type { LaneMachine } from "./lane-machine.ts";
 import type { LaneRun } from "./lane-run.ts";
@@ -16,6 +16,7 @@ import {
   scoreRows,
   trackRows,
 } from "./memory-map.ts";
+import { startValues } from "./start-values.ts";
 
 const trackEntries = Object.entries(trackRows);
 const scoreEntries = Object.entries(scoreRows) as readonly [keyof typeof scoreRows, number][];
@@ -106,7 +107,7 @@ export abstract class LaneBlock<Run extends LaneRun> {
 
   private fill(lane: number, run: Run): void {
     const { doubles } = this.machine;
-    const { start, orbit, scorer } = run;
+    const { start } = run;
     run.put(lane);
     start.forEach((value, c) => {
       doubles[EXACT_AT / 8 + c * ROW + lane] = value;
@@ -117,31 +118,7 @@ export abstract class LaneBlock<Run extends LaneRun> {
       if (typeof value === "number") doubles[offset / 8 + lane] = value;
     }
     this.pointToTable(lane, run);
-    const energy0 = orbit.energy.hi;
-    const momentum0 = orbit.angularMomentum.hi;
-    const collision = COLLISION_SHARE * (1 - scorer.eccentricity);
-    const [x, y, vx, vy] = start as unknown as readonly [number, number, number, number];
-    const values: Readonly<Record<keyof typeof scoreRows, number>> = {
-      step: 0,
-      alive: 0,
-      lastAlive: 0,
-      // On a circular orbit the start itself is the direction that is passed.
-      side: scorer.circular ? x * y - y * x : x * vx + y * vy,
-      energy0,
-      energyScale: 1 / Math.abs(energy0),
-      momentum0,
-      momentumScale: 1 / Math.abs(momentum0),
-      apsisX: orbit.eccentricityX.hi,
-      apsisY: orbit.eccentricityY.hi,
-      collision2: collision * collision,
-      startX: x,
-      startY: y,
-      phase: 0,
-      apsis: 0,
-      uncertain: 0,
-      inverse: 0,
-      momentum: 0,
-    };
+    const values = startValues(run);
     for (const [name, offset] of scoreEntries) doubles[offset / 8 + lane] = values[name];
     for (const offset of Object.values(maximumRows)) doubles[offset / 8 + lane] = -1;
     for (const offset of Object.values(maximumAtRows)) doubles[offset / 8 + lane] = 0;

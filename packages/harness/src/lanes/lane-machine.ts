@@ -16,7 +16,8 @@ import {
 import type { Summation } from "../score/score.ts";
 import { fillNodes } from "./angle-code.ts";
 import { TABLES_AT, TABLES_BYTES, WORK_BYTES } from "./memory-map.ts";
-import { type ScoreSetting, scoreCode } from "./score-code.ts";
+import { scoreCode } from "./score-code.ts";
+import type { ScoreSetting } from "./score-stages.ts";
 import { TableArena } from "./table-arena.ts";
 import { trackCode } from "./track-code.ts";
 

@@ -23,7 +23,9 @@ export function taskIndices(jobs: readonly CellJob[], workers: number): number[]
     const stepper = findStepper(cell.stepper);
     const lanes = stepper !== undefined && runsInLanes(stepper);
     const key = lanes ? `${cell.stepper} ${cell.summation}` : "";
-    groups.set(key, [...(groups.get(key) ?? []), index]);
+    const group = groups.get(key);
+    if (group === undefined) groups.set(key, [index]);
+    else group.push(index);
   });
   const tasks = [...groups].flatMap(([key, group]) => {
     const order = group.toSorted((a, b) => expectedSteps(jobs[b]) - expectedSteps(jobs[a]) || a - b);

@@ -10,7 +10,8 @@ import {
 } from "../run/controller.ts";
 import { type AttemptRow, type AttemptRows, attemptRows } from "./attempt-rows.ts";
 import type { FunctionCode } from "./encoder.ts";
-import { LaneCode, type Operand, PAIR_BYTES, type Pointer, ROW_BYTES } from "./lane-code.ts";
+import { LaneCode } from "./lane-code.ts";
+import { type Operand, PAIR_BYTES, type Pointer, ROW_BYTES } from "./lane-layout.ts";
 import { writePowers } from "./power-code.ts";
 import { type Place, type ProgramPlaces, StageWriter } from "./stage-writer.ts";
 

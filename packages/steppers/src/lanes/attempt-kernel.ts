@@ -9,7 +9,8 @@ import { firstStep } from "../run/first-step.ts";
 import type { PairStepper } from "../run/variable-step.ts";
 import { ATTEMPT_WIDTH, attemptCode } from "./attempt-code.ts";
 import { type AttemptRow, attemptRows } from "./attempt-rows.ts";
-import { compileLanes, LANES, ROW_BYTES } from "./lane-code.ts";
+import { compileLanes } from "./compile-lanes.ts";
+import { LANES, ROW_BYTES } from "./lane-layout.ts";
 import type { LaneMemory } from "./web-assembly.ts";
 
 /** A planar run of variable step at its start. */

@@ -1,5 +1,5 @@
 import type { Program } from "../program/program.ts";
-import { ROW_BYTES } from "./lane-code.ts";
+import { ROW_BYTES } from "./lane-layout.ts";
 import { type ValueRows, valueRows } from "./value-rows.ts";
 
 const NAMES = [

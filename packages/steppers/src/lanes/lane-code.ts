@@ -1,31 +1,5 @@
-import {
-  type Bytes,
-  doubleBytes,
-  encodeModule,
-  type FunctionCode,
-  opcode,
-  signed,
-  simd,
-  unsigned,
-} from "./encoder.ts";
-import { instantiateModule, type KernelFunction, type LaneMemory } from "./web-assembly.ts";
-
-/** Trajectories in a block: one row of memory holds one quantity of all of them. */
-export const LANES = 16;
-/** Bytes of a row. */
-export const ROW_BYTES: number = 8 * LANES;
-/** Bytes of a pair of lanes: what one vector instruction works on. */
-export const PAIR_BYTES = 16;
-
-/** Something to push onto the operand stack: a local, a constant, or a row read where it is used. */
-export interface Operand {
-  readonly push: Bytes;
-}
-
-/** A local that holds a 32-bit integer, such as a pointer. */
-export interface Pointer extends Operand {
-  readonly local: number;
-}
+import { type Bytes, doubleBytes, type FunctionCode, opcode, signed, simd, unsigned } from "./encoder.ts";
+import type { Operand, Pointer } from "./lane-layout.ts";
 
 const pushLocal = (local: number): number[] => [...opcode.localGet, ...unsigned(local)];
 const memoryAt = (offset: number): number[] => [0x03, ...unsigned(offset)];
@@ -292,12 +266,4 @@ export class LaneCode {
     this.#v128Locals += 1;
     return local;
   }
-}
-
-/** Compiles functions into one instance over `memory`. @throws Error where the host has no WebAssembly with vectors. */
-export function compileLanes(
-  functions: readonly FunctionCode[],
-  memory: LaneMemory,
-): Readonly<Record<string, KernelFunction>> {
-  return instantiateModule(encodeModule(functions), memory);
 }

@@ -1,4 +1,5 @@
-import type { LaneCode, Operand } from "./lane-code.ts";
+import type { LaneCode } from "./lane-code.ts";
+import type { Operand } from "./lane-layout.ts";
 
 /** `power64` in lanes, for several exponents of one base at the cost of six square roots. */
 export function writePowers(code: LaneCode, base: Operand, exponents: readonly number[]): Operand[] {

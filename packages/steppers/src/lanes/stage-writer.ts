@@ -1,5 +1,6 @@
 import type { Operation, Program, Value } from "../program/program.ts";
-import type { LaneCode, Operand, Pointer } from "./lane-code.ts";
+import type { LaneCode } from "./lane-code.ts";
+import type { Operand, Pointer } from "./lane-layout.ts";
 
 /** One quantity of a pair of lanes in memory. */
 export interface Place {

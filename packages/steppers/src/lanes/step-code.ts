@@ -1,7 +1,8 @@
 import { lower } from "../program/lower.ts";
 import type { Program } from "../program/program.ts";
 import { type FunctionCode, opcode, signed } from "./encoder.ts";
-import { LaneCode, PAIR_BYTES, type Pointer, ROW_BYTES } from "./lane-code.ts";
+import { LaneCode } from "./lane-code.ts";
+import { PAIR_BYTES, type Pointer, ROW_BYTES } from "./lane-layout.ts";
 import { type ProgramPlaces, StageWriter } from "./stage-writer.ts";
 import { type StepRows, stepRows } from "./step-rows.ts";
 

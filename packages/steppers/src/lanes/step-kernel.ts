@@ -1,5 +1,6 @@
 import { isCall, type Program } from "../program/program.ts";
-import { compileLanes, LANES, ROW_BYTES } from "./lane-code.ts";
+import { compileLanes } from "./compile-lanes.ts";
+import { LANES, ROW_BYTES } from "./lane-layout.ts";
 import { stepCode } from "./step-code.ts";
 import { stepRows } from "./step-rows.ts";
 import { type LaneMemory, laneMemory } from "./web-assembly.ts";

@@ -1,5 +1,5 @@
 import type { Program, Value } from "../program/program.ts";
-import { ROW_BYTES } from "./lane-code.ts";
+import { ROW_BYTES } from "./lane-layout.ts";
 import { valueRows } from "./value-rows.ts";
 
 /** Where a step program keeps what outlives a stage. Offsets are in bytes; the working rows begin at address 0. */

@@ -1,6 +1,6 @@
 import { lower } from "../program/lower.ts";
 import type { Program, Value } from "../program/program.ts";
-import { ROW_BYTES } from "./lane-code.ts";
+import { ROW_BYTES } from "./lane-layout.ts";
 
 /** Rows for the values of a program that outlive a stage and are no outputs; a row is used again once its value has been read last. */
 export interface ValueRows {

@@ -4,6 +4,7 @@ import { chooseVerb } from "./choose-verb.ts";
 import { convergeVerb } from "./converge-verb.ts";
 import { exactVerb } from "./exact-verb.ts";
 import { longRunVerb } from "./long-run-verb.ts";
+import { reportVerb } from "./report-verb.ts";
 import type { Outcome } from "./run-command-line.ts";
 import { scoreVerb } from "./score-verb.ts";
 import { steppersVerb } from "./steppers-verb.ts";
@@ -21,7 +22,16 @@ export function buildProgram(outcome: Outcome): Command {
       "after",
       "\nExit codes: 0 every limit held; 1 a limit exceeded or none qualifies; 2 wrong input; 3 stopped.",
     );
-  for (const verb of [chooseVerb, scoreVerb, sweepVerb, convergeVerb, longRunVerb, exactVerb, steppersVerb])
+  for (const verb of [
+    chooseVerb,
+    scoreVerb,
+    sweepVerb,
+    convergeVerb,
+    longRunVerb,
+    reportVerb,
+    exactVerb,
+    steppersVerb,
+  ])
     program.addCommand(verb(outcome));
   for (const command of program.commands) command.copyInheritedSettings(program);
   return program;

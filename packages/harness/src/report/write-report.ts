@@ -3,6 +3,7 @@ import { join } from "node:path";
 import type { Chart } from "./chart.ts";
 import { describeCharts } from "./describe-charts.ts";
 import type { ChoiceEvidence } from "./evidence.ts";
+import { asStored } from "./evidence-schema.ts";
 import { drawingSpec } from "./page/figures.ts";
 import { renderPage } from "./page/render-page.ts";
 import { toPng } from "./render/to-png.ts";
@@ -14,9 +15,11 @@ import { compileSpec, drawSpec, toSvg } from "./render/to-svg.ts";
  */
 export async function writeReport(
   directory: string,
-  evidence: ChoiceEvidence,
+  given: ChoiceEvidence,
   extraFiles: Readonly<Record<string, string | Uint8Array>> = {},
 ): Promise<void> {
+  // What cannot be stored is not drawn: the same picture comes out of the file later.
+  const evidence = asStored(given);
   const charts = describeCharts(evidence);
   const folder = join(directory, "charts");
   await mkdir(folder, { recursive: true });

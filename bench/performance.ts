@@ -30,7 +30,7 @@ export function describePerformance(performance: Performance): string {
     "",
     `Measured in one run on ${machine.cores} cores of ${machine.processor}, Node ${machine.node}, ` +
       `${machine.compiler ?? "no C compiler"} (${machine.compilerFlags}); load average ${machine.load.toFixed(1)} as it began, so ` +
-      "only ratios carry over. Times in nanoseconds; ± is the distance between the best and the worst of five rounds.",
+      "only ratios carry over. Times in nanoseconds; ± is half the distance between the best and the worst of five rounds.",
     "",
     "## One step of one planar trajectory",
     "",
@@ -95,7 +95,8 @@ export function describePerformance(performance: Performance): string {
     "",
     `${sweep.steppers} steppers, ${sweep.cells} cells, 100 orbits each, every measure at every step: ${(sweep.steps / 1e6).toFixed(1)} million steps, ` +
       `${(sweep.evaluations / 1e6).toFixed(0)} million force evaluations: ${sweep.secondsOneWorker.toFixed(1)} s in one thread, ` +
-      `${sweep.secondsTwoWorkers.toFixed(1)} s in two (${sweep.twoWorkersFaster.toFixed(2)}x).`,
+      `${sweep.secondsTwoWorkers.toFixed(1)} s in two (${sweep.twoWorkersFaster.toFixed(2)}x); ` +
+      `processor time ${sweep.processorSecondsOneWorker.toFixed(1)} and ${sweep.processorSecondsTwoWorkers.toFixed(1)} s.`,
     "",
     ...table(
       ["orbits", "peak memory, MB", "seconds"],

@@ -1,6 +1,7 @@
 import { fileURLToPath } from "node:url";
 import { catalogue } from "@perigauge/steppers";
 import { type Cell, CellPool, MEASURES } from "perigauge";
+import { processorTime } from "./rounds.ts";
 
 /** A whole sweep: steppers x eccentricities x step sizes, 100 orbits each, every measure at every step. */
 export interface SweepSpeed {
@@ -11,6 +12,16 @@ export interface SweepSpeed {
   readonly secondsOneWorker: number;
   readonly secondsTwoWorkers: number;
   readonly twoWorkersFaster: number;
+  /** Processor time of all threads, which other work on the machine leaves alone: two workers cost as much as one where this is equal. */
+  readonly processorSecondsOneWorker: number;
+  readonly processorSecondsTwoWorkers: number;
+}
+
+interface SweepRun {
+  readonly seconds: number;
+  readonly processorSeconds: number;
+  readonly steps: number;
+  readonly evaluations: number;
 }
 
 const STEPPERS = 25;
@@ -31,17 +42,24 @@ export async function sweepBench(): Promise<SweepSpeed> {
       })),
     ),
   );
-  const run = async (workers: number): Promise<{ seconds: number; steps: number; evaluations: number }> => {
+  const run = async (workers: number): Promise<SweepRun> => {
     const pool = new CellPool({ workers });
     // Workers are started and kernels compiled before the clock runs.
     await pool.run(jobs, { measures: MEASURES, summaries: "maxima" });
     const from = performance.now();
+    const spent = processorTime();
     const scores = await pool.run(jobs, { measures: MEASURES, summaries: "maxima" });
     const seconds = (performance.now() - from) / 1000;
+    const processorSeconds = (processorTime() - spent) / 1e9;
     await pool.close();
     const sum = (of: (score: (typeof scores)[number]) => number): number =>
       scores.reduce((total, score) => total + of(score), 0);
-    return { seconds, steps: sum(({ steps }) => steps), evaluations: sum(({ evaluations }) => evaluations) };
+    return {
+      seconds,
+      processorSeconds,
+      steps: sum(({ steps }) => steps),
+      evaluations: sum(({ evaluations }) => evaluations),
+    };
   };
   const one = await run(1);
   const two = await run(2);
@@ -53,6 +71,8 @@ export async function sweepBench(): Promise<SweepSpeed> {
     secondsOneWorker: one.seconds,
     secondsTwoWorkers: two.seconds,
     twoWorkersFaster: one.seconds / two.seconds,
+    processorSecondsOneWorker: one.processorSeconds,
+    processorSecondsTwoWorkers: two.processorSeconds,
   };
 }
 

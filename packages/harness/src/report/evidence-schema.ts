@@ -119,6 +119,26 @@ const surveyPoint = z.object({
   command: text,
 });
 
+const plane = z.object({
+  orbits: number,
+  semiMajorAxisKm: number,
+  steppers: z.array(text),
+  eccentricities: z.array(number),
+  stepsPerOrbit: z.array(number),
+  cells: z.array(
+    z.object({
+      stepper: text,
+      eccentricity: number,
+      stepsPerOrbit: number,
+      evaluationsPerOrbit: number,
+      phase: numberOrNull,
+      ratio: numberOrNull,
+      bindingLimit: text.nullable(),
+      command: text,
+    }),
+  ),
+});
+
 const place = z.object({ xKm: number, yKm: number });
 
 /** What a stored evidence must hold to be drawn again; fields beyond are let be. */
@@ -144,6 +164,7 @@ export const evidenceSchema: z.ZodType<unknown> = z.object({
     againstEccentricity: z.array(surveyPoint),
     eccentricity: number,
     againstStep: z.array(surveyPoint),
+    plane: plane.optional(),
   }),
   histories: z.array(
     z.object({
@@ -165,6 +186,13 @@ export const evidenceSchema: z.ZodType<unknown> = z.object({
           alongTrackKm: numberOrNull,
         }),
       ),
+      periods: z.array(z.object({ orbit: number, periodRelative: number })).optional(),
+      oscillation: z
+        .object({
+          periapsisAtOrbit: numberOrNull,
+          points: z.array(z.object({ orbit: number, energyRelative: numberOrNull })),
+        })
+        .optional(),
     }),
   ),
   track: z.object({

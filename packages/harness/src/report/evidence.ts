@@ -57,6 +57,32 @@ export interface Survey {
   readonly againstEccentricity: readonly SurveyPoint[];
   readonly eccentricity: number;
   readonly againstStep: readonly SurveyPoint[];
+  /** Absent from older results. */
+  readonly plane?: SurveyPlane | undefined;
+}
+
+/** Short runs of the leading fixed-step steppers over a grid of eccentricities and steps per orbit. */
+export interface SurveyPlane {
+  readonly orbits: number;
+  /** Of every cell: the semi-major axis that the limits in kilometres and seconds are read at. */
+  readonly semiMajorAxisKm: number;
+  readonly steppers: readonly string[];
+  readonly eccentricities: readonly number[];
+  readonly stepsPerOrbit: readonly number[];
+  readonly cells: readonly PlaneCell[];
+}
+
+export interface PlaneCell {
+  readonly stepper: string;
+  readonly eccentricity: number;
+  readonly stepsPerOrbit: number;
+  readonly evaluationsPerOrbit: number;
+  /** Largest absolute phase error of the short run, rad; null where it left the orbit. */
+  readonly phase: number | null;
+  /** Largest error over its limit, carried on from the short run to the scenario's duration; null where the run left the orbit or a measure is not defined. */
+  readonly ratio: number | null;
+  readonly bindingLimit: string | null;
+  readonly command: string;
 }
 
 export interface History {
@@ -77,6 +103,15 @@ export interface History {
     readonly phaseRad: number;
     readonly alongTrackKm: number;
   }[];
+  /** Signed period error of single orbits, at most 400 of them spread evenly over the run; absent from older results. */
+  readonly periods?: readonly { readonly orbit: number; readonly periodRelative: number }[] | undefined;
+  /** Signed energy error over the first orbit, and where in it periapsis is passed; absent from older results. */
+  readonly oscillation?:
+    | {
+        readonly periapsisAtOrbit: number | null;
+        readonly points: readonly { readonly orbit: number; readonly energyRelative: number }[];
+      }
+    | undefined;
 }
 
 export interface OrbitTrack {

@@ -7,11 +7,12 @@ import type { ChoiceRun } from "../choose-stepper.ts";
 import { type FleetPoint, orbitsOf } from "../fleet.ts";
 import { describeKnob } from "../ranked.ts";
 import { scoreCommand } from "../reproduce.ts";
+import { OrbitByOrbit } from "./orbit-by-orbit.ts";
 import { stepOf } from "./step-of.ts";
 
 const POINTS = 200;
 const TWO_PI = 2 * Math.PI;
-const MEASURED: ReadonlySet<MeasureName> = new Set(["energy", "phase", "alongTrack"]);
+const MEASURED: ReadonlySet<MeasureName> = new Set(["energy", "phase", "alongTrack", "period"]);
 
 /**
  * Energy, phase and along-track error over the whole duration for the chosen stepper, its best rival of the other kind (symplectic or
@@ -57,7 +58,7 @@ export function histories(run: ChoiceRun, steppers: readonly Stepper[]): History
       eccentricity: point.eccentricity,
       startAnomalyDeg: place.startAnomalyDeg,
       command: scoreCommand(cell),
-      points: historyOf(cell, stepper, point),
+      ...historyOf(cell, stepper, point),
     };
   });
 }
@@ -113,8 +114,15 @@ function rivalOfOtherKind(
   };
 }
 
-/** Largest absolute errors within each of at most 200 intervals that are even in log time. */
-function historyOf(cell: Cell, stepper: Stepper, point: FleetPoint): History["points"] {
+/**
+ * Largest absolute errors within each of at most 200 intervals that are even in log time; the period error of single orbits; the energy
+ * error over the first orbit.
+ */
+function historyOf(
+  cell: Cell,
+  stepper: Stepper,
+  point: FleetPoint,
+): Required<Pick<History, "points" | "periods" | "oscillation">> {
   const first = 1 / 4;
   const edges = Array.from({ length: POINTS }, (_, i) => first * (cell.orbits / first) ** (i / (POINTS - 1)));
   edges[POINTS - 1] = Number.POSITIVE_INFINITY;
@@ -124,6 +132,7 @@ function historyOf(cell: Cell, stepper: Stepper, point: FleetPoint): History["po
   let energy = 0;
   let phase = 0;
   let along = 0;
+  const oneOrbit = new OrbitByOrbit(cell.orbits);
   const close = (): void => {
     if (last > 0) {
       points.push({
@@ -140,6 +149,7 @@ function historyOf(cell: Cell, stepper: Stepper, point: FleetPoint): History["po
     along = 0;
   };
   runCell(cell, stepper, {
+    observePassage: (passage) => oneOrbit.acceptPassage(passage),
     measures: MEASURED,
     summaries: "maxima",
     horizons: [],
@@ -153,6 +163,7 @@ function historyOf(cell: Cell, stepper: Stepper, point: FleetPoint): History["po
           bin += 1;
         }
         last = orbit;
+        if (orbit <= 1) oneOrbit.acceptEnergy(orbit, errors.energy[i] as number);
         energy = Math.max(energy, Math.abs(errors.energy[i] as number));
         phase = Math.max(phase, Math.abs(errors.phase[i] as number));
         along = Math.max(along, Math.abs(errors.alongTrack[i] as number));
@@ -160,5 +171,5 @@ function historyOf(cell: Cell, stepper: Stepper, point: FleetPoint): History["po
     },
   });
   close();
-  return points;
+  return { points, periods: oneOrbit.periods, oscillation: oneOrbit.oscillation() };
 }

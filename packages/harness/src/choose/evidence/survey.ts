@@ -5,6 +5,7 @@ import type { Cell, Score } from "../../score/score.ts";
 import type { ChoiceRun } from "../choose-stepper.ts";
 import { corners } from "../fleet.ts";
 import { scoreCommand } from "../reproduce.ts";
+import { surveyPlane } from "./survey-plane.ts";
 
 const ORBITS = 10;
 /** Off the line of apsides, where symmetric starts would flatter. */
@@ -17,11 +18,8 @@ const TWO_PI = 2 * Math.PI;
  * Short runs of every candidate: over eccentricity at equal cost (that of the choice), and over step size at the scenario's largest
  * eccentricity. Steps per orbit are not whole, so that resonances and whole-orbit cancellations do not flatter.
  */
-export async function survey(
-  { choice, context, tried }: ChoiceRun,
-  pool: CellPool,
-  steppers: readonly Stepper[],
-): Promise<Survey> {
+export async function survey(run: ChoiceRun, pool: CellPool, steppers: readonly Stepper[]): Promise<Survey> {
+  const { choice, context, tried } = run;
   const eccentricity = Math.max(...corners(context.fleet).map((point) => point.eccentricity));
   const winner = choice.ranking.find(({ stepper }) => stepper === choice.choice);
   const evaluationsPerOrbit = Math.round(winner?.evaluationsPerOrbit ?? 2000);
@@ -62,6 +60,7 @@ export async function survey(
     againstEccentricity: points.slice(0, cellsAgainstEccentricity.length),
     eccentricity,
     againstStep: points.slice(cellsAgainstEccentricity.length),
+    plane: await surveyPlane(run, pool, candidates),
   };
 }
 
@@ -74,6 +73,12 @@ function cellOf(stepper: Stepper, eccentricity: number, knob: Partial<Cell>): Ce
     startAnomalyDeg: START_DEG,
     summation: "plain",
   };
+}
+
+/** Accepted steps per orbit of a variable-step run that ended well. */
+function meanSteps(cell: Cell, score: Score): { meanStepsPerOrbit?: number } {
+  if (cell.tolerance === undefined || score.ended.status === "diverged") return {};
+  return { meanStepsPerOrbit: score.steps / cell.orbits };
 }
 
 function pointOf(cell: Cell, score: Score, steppers: readonly Stepper[]): SurveyPoint {
@@ -91,6 +96,7 @@ function pointOf(cell: Cell, score: Score, steppers: readonly Stepper[]): Survey
     energy: diverged ? null : score.energy.max,
     period: diverged ? null : score.period.max,
     ended: score.ended.status,
+    ...meanSteps(cell, score),
     command: scoreCommand(cell),
   };
 }

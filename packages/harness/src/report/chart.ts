@@ -15,4 +15,4 @@ export interface Chart {
   readonly spec: TopLevelSpec;
 }
 
-export type ChartSection = "cost" | "eccentricity" | "step" | "duration" | "orbit";
+export type ChartSection = "cost" | "plane" | "eccentricity" | "step" | "duration" | "orbit";

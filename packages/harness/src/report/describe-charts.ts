@@ -1,6 +1,8 @@
 import type { Chart } from "./chart.ts";
+import { atOneEccentricity } from "./charts/at-one-eccentricity.ts";
 import { costBars } from "./charts/cost-bars.ts";
 import { errorAgainstCost } from "./charts/error-against-cost.ts";
+import { errorPlanes } from "./charts/error-planes.ts";
 import { historyCharts } from "./charts/history-charts.ts";
 import { margins } from "./charts/margins.ts";
 import { orbitPlane } from "./charts/orbit-plane.ts";
@@ -21,6 +23,8 @@ export function describeCharts(evidence: ChoiceEvidence): Chart[] {
     margins(evidence),
     stepBands(evidence),
     ...historyCharts(evidence, looks),
+    ...errorPlanes(evidence),
+    atOneEccentricity(evidence, looks),
     ...againstEccentricity(evidence, looks),
     ...againstSteps(evidence, looks),
     orbitPlane(evidence),

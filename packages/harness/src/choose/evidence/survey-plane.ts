@@ -17,8 +17,8 @@ const ECCENTRICITIES: readonly number[] = [0.1, 0.2, 0.3, 0.4, 0.5, 0.6, 0.7, 0.
 const STEPS_PER_ORBIT: readonly number[] = Array.from({ length: 9 }, (_, i) => 20 * 2 ** i + 0.3);
 
 /**
- * Where in the plane of eccentricity and steps per orbit the leading steppers hold the scenario's limits: the choice, today's and the next
- * of the ranking, as far as they take a step. Errors of the short runs are carried on to the duration with the growth seen in them, as in
+ * Where in the plane of eccentricity and steps per orbit the leading steppers hold the scenario's limits: the choice, today's, the
+ * best of the other kind (symplectic or not) and the next of the ranking, as far as they take a step. Errors of the short runs are carried on to the duration with the growth seen in them, as in
  * screening; limits in kilometres and seconds are read at the orbit of the largest eccentricity.
  */
 export async function surveyPlane(
@@ -62,9 +62,12 @@ export async function surveyPlane(
 }
 
 function leadingSteppers({ choice, tried }: ChoiceRun, steppers: readonly Stepper[]): Stepper[] {
+  const winner = choice.ranking.find(({ stepper }) => stepper === choice.choice);
+  const ofOtherKind = choice.ranking.find(({ symplectic }) => symplectic !== winner?.symplectic);
   const ids = [
     choice.choice,
     choice.current?.stepper,
+    ofOtherKind?.stepper,
     ...choice.ranking.map(({ stepper }) => stepper),
     // Where nothing is ranked: in the order they were tried.
     ...tried.map(({ candidate }) => candidate.stepper.id),

@@ -8,6 +8,7 @@ import { limitWords, plural } from "../text/words.ts";
 import { levelLayers } from "./level-layers.ts";
 import { makeChart } from "./make-chart.ts";
 import { mutedNote } from "./muted-note.ts";
+import { ALLOWED, LIMIT_PARAM, qualifyingLayers } from "./qualifying-layers.ts";
 import { seriesLayers, type Tip } from "./series-layers.ts";
 
 const TIPS: readonly Tip[] = [
@@ -51,15 +52,17 @@ export function errorAgainstCost(evidence: ChoiceEvidence, looks: Looks): Chart 
     command: point.command ?? "",
     ended: "completed",
   }));
-  const limit = levelLayers(y, 1, "limit", { dash: [1, 0], side: "above" });
+  const limit = levelLayers(y, 1, "limit", { dash: [1, 0], side: "above", times: ALLOWED });
   const design = levelLayers(y, 1 / designFactor, `limit ÷ ${formatNumber(designFactor)}`, {
     dash: [6, 4],
     side: "below",
+    times: ALLOWED,
   });
   const levels = designFactor > 1 ? [limit, design] : [limit];
   const layers = [
     ...levels.flatMap((level) => level.line),
     ...seriesLayers(x, y, looks, TIPS, { clip: true }),
+    ...qualifyingLayers(x, y),
     ...levels.flatMap((level) => level.words),
   ];
   return makeChart({
@@ -72,9 +75,10 @@ export function errorAgainstCost(evidence: ChoiceEvidence, looks: Looks): Chart 
     )} at ${plural(points.length, "step or tolerance", "steps or tolerances")}. Below the whole line at 1 every limit holds; below the dashed line each holds ${formatNumber(
       designFactor,
     )} times over. Further left is cheaper. ${window.outside > 0 ? `Outside the axes: ${plural(window.outside, "point")}. ` : ""}${nearestWords(evidence)}`,
-    note: mutedNote(looks),
+    note: `Rings: the cheapest point of each stepper that holds the limits. ${mutedNote(looks)}`.trim(),
     height: 380,
     rows,
+    params: [LIMIT_PARAM],
     layers,
   });
 }

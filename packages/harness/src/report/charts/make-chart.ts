@@ -13,6 +13,10 @@ export interface ChartParts extends Omit<Chart, "spec"> {
   readonly height: number;
   readonly rows: readonly Row[];
   readonly layers: readonly Layer[];
+  /** Values a reader can set, with the input that sets them. */
+  readonly params?: TopLevelSpec["params"];
+  /** Applied to the rows before any layer's own. */
+  readonly transform?: Layer["transform"];
 }
 
 const SCHEMA = "https://vega.github.io/schema/vega-lite/v6.json";
@@ -38,6 +42,8 @@ export function makeChart(parts: ChartParts): Chart {
       autosize: { type: "fit-x", contains: "padding" },
       config: chartConfig,
       data: { values: parts.rows.map(rounded) },
+      ...(parts.params === undefined ? {} : { params: parts.params }),
+      ...(parts.transform === undefined ? {} : { transform: parts.transform }),
       layer: [...parts.layers],
     },
   };

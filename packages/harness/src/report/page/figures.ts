@@ -15,6 +15,7 @@ const SECTIONS: readonly {
   readonly wide: boolean;
 }[] = [
   { section: "cost", heading: "What does holding the limits cost?", wide: true },
+  { section: "plane", heading: "Over which eccentricities and steps do the limits hold?", wide: false },
   { section: "duration", heading: "How do the errors grow over the duration?", wide: false },
   { section: "eccentricity", heading: "How do the errors grow with eccentricity?", wide: false },
   { section: "step", heading: "How do the errors fall with the step?", wide: false },
@@ -36,8 +37,13 @@ function figure(chart: Chart, drawing: Markup): Markup {
   const id = `chart-${chart.name}`;
   return html`<figure id="${id}"><h4 id="${id}-title">${wholeWords(chart.title)}</h4>
 <div class="drawing" role="img" aria-labelledby="${id}-title" aria-describedby="${id}-text" data-chart="${chart.name}"><div aria-hidden="true">${drawing}</div></div>
-<figcaption id="${id}-text">${chart.description} ${chart.note}</figcaption></figure>
+${hasInput(chart) ? html`<div class="input" data-input="${chart.name}"></div>` : null}<figcaption id="${id}-text">${chart.description} ${chart.note}</figcaption></figure>
 `;
+}
+
+/** Whether the chart has a value that the reader can set; the runtime puts the input where the figure leaves room for it. */
+function hasInput({ spec }: Chart): boolean {
+  return (spec.params ?? []).some((param) => "bind" in param && param.bind !== "legend");
 }
 
 /** What the page's script draws: compiled charts, whose data tables are pooled because several charts share one. */

@@ -103,7 +103,10 @@ export const pageScript: string = String.raw`
     for (const table of spec.data) if (typeof table.values === "number") table.values = unpack(source.tables[table.values]);
     const place = document.createElement("div");
     const view = new vega.View(vega.parse(spec), { renderer: "svg", hover: true, tooltip: showTip, logLevel: vega.Error });
-    view.initialize(place).width(drawing.clientWidth);
+    const input = document.querySelector('[data-input="' + name + '"]');
+    // Inputs stand under the chart, not in it; Enter in one must not send the page anywhere.
+    input?.addEventListener("submit", (event) => event.preventDefault());
+    view.initialize(place, input).width(drawing.clientWidth);
     await view.runAsync();
     for (const attribute of ["role", "aria-roledescription", "aria-label"]) place.removeAttribute(attribute);
     place.setAttribute("aria-hidden", "true");

@@ -69,6 +69,11 @@ figure{margin:0;min-width:0;scroll-margin-top:120px}
 figcaption{font-size:.88rem;line-height:1.5;margin-top:.5em;max-width:80ch}
 .drawing{min-height:120px;overflow:hidden}
 .drawing svg{display:block;max-width:100%;height:auto}
+.input{font-size:.9rem;margin:.4em 0}.input form,.input .vega-bind{margin:0}
+.input label,.input .vega-bind{display:flex;flex-wrap:wrap;align-items:center;gap:4px 10px}
+.input input{font:inherit;color:inherit;background:var(--paper);accent-color:var(--stepper0);max-width:100%}
+.input input[type=number]{width:8em;border:1px solid var(--soft);border-radius:3px;padding:4px 8px;min-height:32px}
+.input input[type=range]{width:min(20em,100%);min-height:32px}
 #tip{position:fixed;z-index:10;max-width:min(460px,calc(100vw - 24px));background:var(--paper);color:var(--ink);border:1px solid var(--ink);padding:8px 12px;font-size:.85rem;line-height:1.4;pointer-events:none;box-shadow:3px 3px 0 var(--rule)}
 #tip.held{pointer-events:auto}#tip[hidden]{display:none}
 #tip dl{margin:0}#tip div{display:grid;grid-template-columns:8.5em 1fr;gap:10px}#tip dt{font-weight:400;color:var(--soft)}
@@ -90,7 +95,7 @@ dl.why div,dl.facts-list div{grid-template-columns:1fr}
 @media print{
 @page{margin:14mm}
 body{font-size:10.5pt}main{max-width:none;padding:0}
-.contents,.skip,#tip,.chips .all{display:none}
+.contents,.skip,#tip,.input,.chips .all{display:none}
 .legend{position:static}.legend details{display:none}
 table{font-size:8.5pt}thead th{font-size:8pt}th,td{padding:5px 8px 5px 0}.gauge svg{width:50px}td[data-heading^=binding]{min-width:7em}
 .figures,.figures.wide{grid-template-columns:repeat(2,minmax(0,1fr));gap:18px 20px}

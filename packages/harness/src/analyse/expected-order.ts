@@ -36,8 +36,8 @@ const open = (explanation: string): ExpectedOrder => ({
  *
  * - Symplectic, even p: p in all measures; energy at whole orbits meets the modified energy and shows 2p to 3p, which is not graded
  *   (E. Hairer, C. Lubich, G. Wanner, Geometric Numerical Integration, 2nd ed., Springer 2006, ch. IX and XI).
- * - Symplectic, odd p: the term of order p of the modified energy averages out over an orbit that starts at an apsis, so what is
- *   taken at passages shows p + 1; largest values within an orbit show p.
+ * - Symplectic, odd p: the term of order p of the modified energy averages out over an orbit that starts at an apsis, so the
+ *   time from passage to passage shows p + 1; largest values within an orbit show p.
  * - Others, odd p: p in all but the apsis, which shows p + 1. Even p: the secular energy change is of order p + 1; errors of order
  *   p beside it may be the smaller part, so that orders up to p + 1 are seen over one orbit; the apsis shows p.
  */
@@ -95,9 +95,17 @@ function oddSymplectic(
     case "apsis":
       return graded(p + 1, "the term of order p averages out over an orbit");
     case "period":
-    case "timing":
       return fromApsis
         ? graded(p + 1, "from an apsis the term of order p averages out over an orbit")
+        : graded(p);
+    case "timing":
+      if (startAnomalyDeg % 360 === 0)
+        return graded(p + 1, "from periapsis to periapsis the term of order p averages out");
+      return fromApsis
+        ? {
+            ...between(p, p + 1, "a lead or lag of order p over the first half orbit, then order p + 1"),
+            expectedOrder: p,
+          }
         : graded(p);
     default:
       if (!fromApsis) return graded(p);

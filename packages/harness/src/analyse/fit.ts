@@ -8,6 +8,8 @@ export interface Fit {
 }
 
 export interface SlopeFit extends Fit {
+  /** Standard error by the residuals alone. */
+  readonly scatter: number;
   readonly largestResidual: number;
 }
 
@@ -31,6 +33,7 @@ export function fitSlope(points: readonly (readonly [x: number, y: number])[]): 
     value: m,
     standardError: Math.max(scatter, Math.abs(late - early) / 2),
     points: n,
+    scatter,
     largestResidual: residuals.reduce((largest, residual) => Math.max(largest, Math.abs(residual)), 0),
   };
 }

@@ -59,8 +59,11 @@ const MOST_EVALUATIONS = 2 ** 19;
 const BATCH = 8;
 /** Rungs beyond the start of the floor of every measure, to show it. */
 const FLOOR_RUNGS = 4;
-/** Passages are taken from a run this much longer, in orbits: a late body would miss the last one otherwise. */
-const PASSAGE_SLACK = 0.25;
+/**
+ * Passages are taken from a run this much longer, in orbits: a late body would miss the last one otherwise. A start elsewhere than at
+ * periapsis is no passage, and two are needed: one orbit more.
+ */
+const passageSlack = (startAnomalyDeg: number): number => (startAnomalyDeg % 360 === 0 ? 0.25 : 1.25);
 
 const STEP_PLAN: readonly MeasureName[] = ["energy", "phase", "position", "apsis"];
 const PASSAGE_PLAN: readonly MeasureName[] = ["period", "timing"];
@@ -86,7 +89,7 @@ export async function observeOrders(
     if (wanted.length === 0) break;
     const jobs = wanted.map(({ cell }) => ({ cell, horizons: [] }));
     const longer = wanted.map(({ cell }) => ({
-      cell: { ...cell, orbits: cell.orbits + PASSAGE_SLACK },
+      cell: { ...cell, orbits: cell.orbits + passageSlack(cell.startAnomalyDeg) },
       horizons: [],
     }));
     const runs = await pool.run(jobs, { measures: STEP_PLAN, summaries: "all" });

@@ -27,7 +27,7 @@ const LARGEST_ERROR = 0.1;
 const SMALLEST_WINDOW = 5;
 /** The window must span this ratio of step sizes. */
 const SMALLEST_SPAN = 2;
-/** And no more than this: what is coarser is further from the limit. */
+/** And no more than this, unless five rungs take more: what is coarser is further from the limit. */
 const LARGEST_SPAN = 8.1;
 /** Standard errors asked of the fit, the first that some window meets. */
 const STANDARD_ERRORS: readonly number[] = [0.02, 0.05, 0.1];
@@ -87,7 +87,7 @@ function longestWindow(
     const window = rungs.slice(from, end) as (Rung & { readonly error: number })[];
     const first = (window[0] as Rung).fineness;
     const last = (window.at(-1) as Rung).fineness;
-    if (last > LARGEST_SPAN * first) continue;
+    if (last > LARGEST_SPAN * first && window.length > SMALLEST_WINDOW) continue;
     if (last < SMALLEST_SPAN * first) return null;
     const points = window.map(({ fineness, error }) => [Math.log(fineness), -Math.log(error)] as const);
     const order = onePower(points, standardError);

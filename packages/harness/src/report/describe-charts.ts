@@ -8,6 +8,7 @@ import { margins } from "./charts/margins.ts";
 import { orbitPlane } from "./charts/orbit-plane.ts";
 import { stepBands } from "./charts/step-bands.ts";
 import { againstEccentricity, againstSteps } from "./charts/survey-charts.ts";
+import { oscillationChart, periodChart } from "./charts/within-orbit-charts.ts";
 import type { ChoiceEvidence } from "./evidence.ts";
 import { chooseLooks } from "./look/stepper-look.ts";
 
@@ -23,6 +24,8 @@ export function describeCharts(evidence: ChoiceEvidence): Chart[] {
     margins(evidence),
     stepBands(evidence),
     ...historyCharts(evidence, looks),
+    oscillationChart(evidence, looks),
+    periodChart(evidence, looks),
     ...errorPlanes(evidence),
     atOneEccentricity(evidence, looks),
     ...againstEccentricity(evidence, looks),

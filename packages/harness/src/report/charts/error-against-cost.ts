@@ -62,7 +62,7 @@ export function errorAgainstCost(evidence: ChoiceEvidence, looks: Looks): Chart 
   const layers = [
     ...levels.flatMap((level) => level.line),
     ...seriesLayers(x, y, looks, TIPS, { clip: true }),
-    ...qualifyingLayers(x, y),
+    ...qualifyingLayers(x, y, looks),
     ...levels.flatMap((level) => level.words),
   ];
   return makeChart({

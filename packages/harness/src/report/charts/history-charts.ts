@@ -6,6 +6,7 @@ import { colour } from "../look/palette.ts";
 import type { Looks } from "../look/stepper-look.ts";
 import { formatNumber } from "../text/number.ts";
 import { dayWords, durationWords, listWords } from "../text/words.ts";
+import { growthSlope, slopeLabels, slopeWords } from "./growth-slopes.ts";
 import { growthFinding, type HistoryMeasure, trackFinding } from "./history-findings.ts";
 import { HOVER_MARKS } from "./hover-marks.ts";
 import { type Layer, makeChart, type Row } from "./make-chart.ts";
@@ -34,7 +35,13 @@ const MEASURES: readonly HistoryMeasure[] = [
   },
 ];
 
-const DASH_OF_ROLE = { choice: [1, 0], rival: [7, 3], current: [2, 2] } as const;
+const HEIGHT = 300;
+
+export const DASH_OF_ROLE: Readonly<Record<History["role"], readonly number[]>> = {
+  choice: [1, 0],
+  rival: [7, 3],
+  current: [2, 2],
+};
 
 /** How do the errors grow over the duration, for the choice, its best rival of the other kind and today's stepper? */
 export function historyCharts(evidence: ChoiceEvidence, looks: Looks): Chart[] {
@@ -78,13 +85,17 @@ export function historyCharts(evidence: ChoiceEvidence, looks: Looks): Chart[] {
         measure.field === "alongTrackKm" ? trackFinding(evidence, measure) : growthFinding(evidence, measure),
       description: `Largest ${measure.words} of each interval (vertical, logarithmic) against days since the start (horizontal, logarithmic), over ${durationWords(
         evidence.choice.scenario,
-      )}. ${histories.map((history, index) => `${labels[index] ?? ""}: ${endWords(history, measure)}`).join(". ")}.${
+      )}. ${histories.map((history, index) => `${labels[index] ?? ""}: ${endWords(history, measure)}, ${slopeWords(growthSlope(history, measure.field))}`).join(". ")}.${
         limits.length === 0 ? "" : ` Limits drawn: ${listWords(limits.map((limit) => limit.words))}.`
       }`,
       note: caseWords(histories),
-      height: 300,
+      height: HEIGHT,
       rows,
-      layers: [...limitLayers(limits, x, y), ...lines(histories, labels, x, y, looks, measure)],
+      layers: [
+        ...limitLayers(limits, x, y),
+        ...lines(histories, labels, x, y, looks, measure),
+        ...slopeLabels(histories, measure, y, HEIGHT),
+      ],
     });
   });
 }
@@ -196,7 +207,7 @@ function limitLayers(limits: readonly DrawnLimit[], x: Quantity, y: Quantity): L
 }
 
 /** Labels that differ even where two histories are of one stepper. */
-function labelsOf(histories: readonly History[]): string[] {
+export function labelsOf(histories: readonly History[]): string[] {
   const seen = new Map<string, number>();
   return histories.map((history) => {
     const count = (seen.get(history.label) ?? 0) + 1;
@@ -206,7 +217,7 @@ function labelsOf(histories: readonly History[]): string[] {
 }
 
 /** The cells drawn, once where all are of one orbit and start. */
-function caseWords(histories: readonly History[]): string {
+export function caseWords(histories: readonly History[]): string {
   const cells = histories.map(
     (history) =>
       `orbit ${history.orbit}, e = ${formatNumber(history.eccentricity, 5)}, start at ${formatNumber(history.startAnomalyDeg)}°`,

@@ -11,15 +11,27 @@ const OUTLINE_POINTS = 96;
 export function orbitPlane(evidence: ChoiceEvidence): Chart | null {
   const { track } = evidence;
   if (track.exact.length < 2) return null;
+  const { massRatio } = evidence.choice.scenario;
+  const bodies = bodiesOf(massRatio);
   const rows: Row[] = [
-    ...track.exact.map((point, index) => ({ what: "exact", index, xKm: point.xKm, yKm: point.yKm })),
-    ...track.numerical.map((point) => ({
-      what: "numerical",
-      index: point.step,
-      xKm: point.xKm,
-      yKm: point.yKm,
-    })),
-    ...bodyOutline(track.bodyRadiusKm ?? 0),
+    ...bodies.flatMap(({ body, share }) => [
+      ...track.exact.map(({ xKm, yKm }, index) => ({
+        what: "exact",
+        body,
+        index,
+        xKm: share * xKm,
+        yKm: share * yKm,
+      })),
+      ...track.numerical.map(({ xKm, yKm, step }) => ({
+        what: "numerical",
+        body,
+        index: step,
+        xKm: share * xKm,
+        yKm: share * yKm,
+      })),
+    ]),
+    // About the barycentre the central body moves: it has an orbit of its own instead of a disc.
+    ...bodyOutline(massRatio === undefined ? (track.bodyRadiusKm ?? 0) : 0),
   ];
   const extent = extentOf(rows);
   // One length for a kilometre on both axes, whatever the width the page gives: whichever side is short of room decides.
@@ -72,14 +84,27 @@ export function orbitPlane(evidence: ChoiceEvidence): Chart | null {
     {
       transform: [{ filter: "datum.what === 'exact'" }],
       mark: { type: "line", stroke: colour("soft"), strokeWidth: 1.4, interpolate: "linear-closed" },
-      encoding: { ...position, order: { field: "index", type: "quantitative" } },
+      encoding: {
+        ...position,
+        detail: { field: "body", type: "nominal" },
+        order: { field: "index", type: "quantitative" },
+      },
     },
     {
       transform: [{ filter: "datum.what === 'numerical'" }],
-      mark: { type: "circle", size: 16, opacity: 1, color: colour("stepper0") },
+      mark: { type: "point", filled: true, size: 16, opacity: 1 },
       encoding: {
         ...position,
+        color: {
+          condition: { test: "datum.body === 'heavier body'", value: colour("stepper1") },
+          value: colour("stepper0"),
+        },
+        shape: {
+          condition: { test: "datum.body === 'heavier body'", value: "square" },
+          value: "circle",
+        },
         tooltip: [
+          { field: "body", title: "body", type: "nominal" },
           { field: "index", title: "step", type: "quantitative", format: "d" },
           { field: "xKm", title: "x, km", type: "quantitative", format: ".5e" },
           { field: "yKm", title: "y, km", type: "quantitative", format: ".5e" },
@@ -99,19 +124,41 @@ export function orbitPlane(evidence: ChoiceEvidence): Chart | null {
     title: titleOf(track, turn),
     description: `The orbit "${track.orbit}" (eccentricity ${formatNumber(track.eccentricity)}) to scale: the exact orbit as a line, ${formatCount(
       track.numerical.length,
-    )} step marks of ${track.stepper} from the end of the run, the central body ${
-      track.bodyRadiusKm === null
-        ? "as a cross, its size not being given"
-        : `as a disc of radius ${formatNumber(track.bodyRadiusKm, 5)} km`
-    }. Closest to the centre ${formatNumber(Math.min(...track.exact.map(radius)), 4)} km, farthest ${formatNumber(
+    )} step marks of ${track.stepper} over one period from periapsis, ${centreWords(track, massRatio)}. Closest to the ${massRatio === undefined ? "centre" : "other body"} ${formatNumber(Math.min(...track.exact.map(radius)), 4)} km, farthest ${formatNumber(
       Math.max(...track.exact.map(radius)),
       4,
     )} km.${turn === null ? "" : ` Between neighbouring steps the body turns by at most ${formatNumber(turn.degrees, 2)}° as seen from the centre.`}`,
-    note: `Line: exact. Marks: every step of ${track.stepper}. Disc: the central body.`,
+    note:
+      massRatio === undefined
+        ? `Line: exact. Marks: every step of ${track.stepper}. Disc: the central body.`
+        : `Lines: exact. Marks: every step of ${track.stepper}, discs the lighter body, squares the heavier. Cross: the barycentre.`,
     height: HEIGHT,
     rows,
     layers,
   });
+}
+
+interface Body {
+  readonly body: string;
+  /** Position about the barycentre over the relative position. */
+  readonly share: number;
+}
+
+/** With a mass ratio q each body's own orbit: 1/(1 + q) of the relative one for the lighter, -q/(1 + q) for the heavier. */
+function bodiesOf(massRatio: number | undefined): Body[] {
+  if (massRatio === undefined) return [{ body: "", share: 1 }];
+  return [
+    { body: "lighter body", share: 1 / (1 + massRatio) },
+    { body: "heavier body", share: -massRatio / (1 + massRatio) },
+  ];
+}
+
+function centreWords({ bodyRadiusKm }: OrbitTrack, massRatio: number | undefined): string {
+  if (massRatio !== undefined)
+    return `for both bodies about their barycentre, a cross (mass ratio ${formatNumber(massRatio)})`;
+  return bodyRadiusKm === null
+    ? "the central body as a cross, its size not being given"
+    : `the central body as a disc of radius ${formatNumber(bodyRadiusKm, 5)} km`;
 }
 
 interface Turn {

@@ -1,5 +1,6 @@
 import { axisChannel, type Quantity } from "../axes/axis-channel.ts";
 import { colour } from "../look/palette.ts";
+import type { Looks } from "../look/stepper-look.ts";
 import type { Layer } from "./make-chart.ts";
 
 /** What the reader types: every limit of the scenario multiplied by it. */
@@ -20,7 +21,8 @@ export const ALLOWED = "(toNumber(limit_times) > 0 ? toNumber(limit_times) : 1)"
  * Which steppers qualify: a ring round the cheapest point of each that holds the limits, and in words how many do and which is cheapest. Rows
  * carry `stepper`; x is the cost and y the error over the limit.
  */
-export function qualifyingLayers(x: Quantity, y: Quantity): Layer[] {
+export function qualifyingLayers(x: Quantity, y: Quantity, looks: Looks): Layer[] {
+  const coloured = { field: "stepper", oneOf: looks.highlighted.map(({ stepper }) => stepper) };
   const holds = `isValid(datum[${JSON.stringify(y.field)}]) && datum[${JSON.stringify(y.field)}] <= ${ALLOWED}`;
   const words =
     "datum.steppers + (datum.steppers === 1 ? ' stepper holds' : ' steppers hold') + ' the limits' + (datum.steppers > 0 ? ' at a point; cheapest: ' + datum.cheapest.stepper : '')";
@@ -62,14 +64,18 @@ export function qualifyingLayers(x: Quantity, y: Quantity): Layer[] {
       mark: {
         type: "point",
         shape: "circle",
-        size: 150,
+        size: 110,
         filled: false,
         stroke: colour("limit"),
-        strokeWidth: 1.4,
+        strokeWidth: 1.3,
         opacity: 1,
         clip: true,
       },
-      encoding: { x: axisChannel(x), y: axisChannel(y, true) },
+      encoding: {
+        x: axisChannel(x),
+        y: axisChannel(y, true),
+        strokeOpacity: { condition: { test: coloured, value: 1 }, value: 0.45 },
+      },
     },
     {
       transform: summary,

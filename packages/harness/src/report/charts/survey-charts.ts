@@ -5,6 +5,7 @@ import type { ChoiceEvidence, SurveyPoint } from "../evidence.ts";
 import type { Looks } from "../look/stepper-look.ts";
 import { formatCount, formatNumber, formatTimes } from "../text/number.ts";
 import { plural } from "../text/words.ts";
+import { fittedOrders, groundLayers, orderLabels, orderWords } from "./convergence-layers.ts";
 import { makeChart, type Row } from "./make-chart.ts";
 import { mutedNote } from "./muted-note.ts";
 import { seriesLayers, type Tip } from "./series-layers.ts";
@@ -76,24 +77,30 @@ export function againstSteps(evidence: ChoiceEvidence, looks: Looks): Chart[] {
   const omitted = new Set(
     survey.againstStep.filter((point) => stepsOf(point) === null).map((point) => point.stepper),
   );
-  return MEASURES.filter((measure) => points.some((point) => positive(point, measure))).map((measure) =>
-    makeChart({
+  return MEASURES.filter((measure) => points.some((point) => positive(point, measure))).map((measure) => {
+    const y = quantityOf(measure, points);
+    const orders = fittedOrders(survey, measure.field, looks, stepsOf);
+    return makeChart({
       name: `${measure.field}-against-steps`,
       section: "step",
       title: stepFinding(evidence, points, measure),
       description: `Largest ${measure.words} (vertical, logarithmic) against steps per orbit (horizontal, logarithmic) at eccentricity ${formatNumber(
         survey.eccentricity,
-      )}, over ${plural(survey.orbits, "orbit")} from ${startWords(survey.startAnomalyDeg)}. A straight line is a power law; where it bends level, rounding takes over.${
+      )}, over ${plural(survey.orbits, "orbit")} from ${startWords(survey.startAnomalyDeg)}. A straight line is a power law; where it bends level, rounding takes over. Shaded: what rounding alone would give at one evaluation a step.${orderWords(orders)}${
         omitted.size > 0
           ? ` Not drawn, having no fixed number of steps: ${omitted.size <= 4 ? [...omitted].join(", ") : plural(omitted.size, "variable-step stepper")}.`
           : ""
       }${divergedWords(points)}`,
-      note: mutedNote(looks),
-      height: 300,
+      note: `Shaded: rounding floor. Dotted: reference slopes. ${mutedNote(looks)}`.trim(),
+      height: 320,
       rows,
-      layers: seriesLayers(x, quantityOf(measure, points), looks, TIPS),
-    }),
-  );
+      layers: [
+        ...groundLayers(measure.field, survey, orders, x, y),
+        ...seriesLayers(x, y, looks, TIPS),
+        ...orderLabels(orders),
+      ],
+    });
+  });
 }
 
 function rowOf(point: SurveyPoint): Row {

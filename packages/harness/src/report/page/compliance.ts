@@ -27,11 +27,18 @@ function limitRows(errors: LimitErrors, designFactor: number): Markup[][] {
   return Object.entries(errors).map(([key, error]) => [
     html`${limitWords(key)}`,
     html`${limitValue(key, error.limit)}`,
-    html`${error.value === null ? "diverged or not defined" : limitValue(key, error.value)}`,
+    html`${error.value === null ? "diverged or not defined" : limitValue(key, error.value)}${uncertainty(error)}`,
     factorCell(error.value === 0 ? Number.POSITIVE_INFINITY : error.factor),
     gauge(error.value === 0 ? Number.POSITIVE_INFINITY : error.factor, designFactor),
     html`${worstCellWords(error)}<br>${commandCode(error.command)}`,
   ]);
+}
+
+/** An extrapolated value says by how much theory allows it to be exceeded. */
+function uncertainty({ uncertaintyFactor }: LimitErrors[string]): Markup | null {
+  return uncertaintyFactor > 1.005
+    ? html`<span class="title">extrapolated, up to ${formatTimes(uncertaintyFactor)} times larger</span>`
+    : null;
 }
 
 /** What the scenario asks beside errors, where the result can be read off the stepper. */

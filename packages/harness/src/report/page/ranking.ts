@@ -1,7 +1,7 @@
 import type { Choice, ExcludedStepper, RankedStepper } from "../../choose/choice.ts";
 import { html, type Markup } from "../text/html.ts";
 import { formatCount, formatNumber, formatTimes } from "../text/number.ts";
-import { knobWords, limitUnit, limitValue, limitWords } from "../text/words.ts";
+import { knobWords, limitUnit, limitValue, limitWords, withWords } from "../text/words.ts";
 import { type Column, table } from "./table.ts";
 import { chosenOf } from "./verdict.ts";
 
@@ -30,7 +30,7 @@ export function ranking(choice: Choice): Markup {
   return html`<section aria-labelledby="ranking"><h2 id="ranking">Ranking</h2>
 <p>By force evaluations over the whole fleet and duration. ${
     choice.ranking.some((ranked) => ranked.evidence === "extrapolated")
-      ? "Extrapolated entries come from short runs and cannot be chosen."
+      ? "Extrapolated entries come from short runs and cannot be chosen; their errors may be as many times larger as stated, should growth turn to the steepest that theory allows."
       : ""
   }</p>
 ${table("Steppers by cost", RANKING_COLUMNS, rows.slice(0, FIRST_ROWS), marked)}
@@ -48,8 +48,14 @@ function rankingRow(ranked: RankedStepper, rank: number, chosen: RankedStepper |
     html`${formatTimes(ranked.margin)}`,
     html`${ranked.bindingLimit === null ? "–" : limitWords(ranked.bindingLimit)}`,
     html`${roomWords(ranked)}`,
-    html`${ranked.evidence === "run" ? "run in full" : "extrapolated"}`,
+    html`${ranked.evidence === "run" ? "run in full" : extrapolatedWords(ranked)}`,
   ];
+}
+
+/** With the largest uncertainty of its errors, where theory allows them to be larger. */
+function extrapolatedWords({ errors }: RankedStepper): string {
+  const most = Math.max(1, ...Object.values(errors).map(({ uncertaintyFactor }) => uncertaintyFactor));
+  return most > 1.005 ? `extrapolated; errors up to ${formatTimes(most)} times larger` : "extrapolated";
 }
 
 function roomWords({ cliff }: RankedStepper): string {
@@ -59,7 +65,7 @@ function roomWords({ cliff }: RankedStepper): string {
 
 function whyList(choice: Choice): Markup {
   return html`<details><summary>Why each stands where it does</summary><dl class="why">${choice.ranking.map(
-    (ranked) => html`<div><dt>${ranked.stepper}</dt><dd>${ranked.why}</dd></div>`,
+    (ranked) => html`<div><dt>${ranked.stepper}</dt><dd>${withWords(ranked.why)}</dd></div>`,
   )}</dl></details>`;
 }
 
@@ -75,7 +81,7 @@ export function excluded(choice: Choice): Markup | null {
   if (choice.excluded.length === 0) return null;
   const rows = choice.excluded.map((entry) => [
     html`${entry.stepper}`,
-    html`${entry.reason}`,
+    html`${withWords(entry.reason)}`,
     html`${valueWords(entry, entry.value)}`,
     html`${valueWords(entry, entry.allowed)}`,
   ]);

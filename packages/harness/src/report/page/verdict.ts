@@ -2,7 +2,7 @@ import type { Choice, RankedStepper } from "../../choose/choice.ts";
 import { html, type Markup } from "../text/html.ts";
 import { formatCount, formatNumber, formatTimes } from "../text/number.ts";
 import { wholeWords } from "../text/whole-words.ts";
-import { durationWords, knobWords, limitWords, plural } from "../text/words.ts";
+import { durationWords, knobWords, limitWords, plural, withWords } from "../text/words.ts";
 import { worstCellWords } from "./worst-cell.ts";
 
 /** The stepper that was chosen, where one qualifies. */
@@ -44,7 +44,7 @@ ${
 }
 </ul>
 <p>${wholeWords(`${bandWords(chosen)} ${edgeWords(chosen)} ${runnerUpWords(choice, chosen)}`)}</p>
-<details><summary>In plain words</summary><p>${choice.explanation}</p></details>`;
+<details><summary>In plain words</summary><p>${withWords(choice.explanation)}</p></details>`;
 }
 
 function noneQualifies(choice: Choice): Markup {
@@ -53,7 +53,7 @@ function noneQualifies(choice: Choice): Markup {
 <ul class="give">${
     choice.whatWouldHaveToGive.length === 0
       ? html`<li>Nothing was found that would do: see the steppers excluded, with their reasons.</li>`
-      : choice.whatWouldHaveToGive.map((line) => html`<li>${line}</li>`)
+      : choice.whatWouldHaveToGive.map((line) => html`<li>${withWords(line)}</li>`)
   }</ul>`;
 }
 

@@ -1,6 +1,6 @@
 import { LIMIT_KEYS, type LimitKey } from "../../choose/choice.ts";
 import type { Scenario } from "../../scenario/scenario.ts";
-import { formatCount, formatNumber, NO_BREAK } from "./number.ts";
+import { formatCount, formatNumber, NO_BREAK, superscript } from "./number.ts";
 
 const LIMIT_WORDS: Readonly<Record<LimitKey, { readonly words: string; readonly unit: string }>> = {
   alongTrackKm: { words: "position along the track", unit: "km" },
@@ -18,6 +18,40 @@ export function limitWords(key: string): string {
   const [name = "", days] = key.split("@");
   const words = isLimitKey(name) ? LIMIT_WORDS[name].words : name;
   return days === undefined ? words : `${words}, first ${dayWords(Number(days))}`;
+}
+
+const REQUIREMENT_WORDS: Readonly<Record<string, string>> = {
+  fixedStep: "a fixed step",
+  symplectic: "a symplectic stepper",
+  timeReversible: "a time-reversible stepper",
+  explicit: "an explicit stepper",
+  selfStarting: "a self-starting stepper",
+  denseOutput: "dense output",
+  evaluationsPerOrbit: "force evaluations per orbit",
+};
+
+/**
+ * A sentence of a result with the keys of limits and requirements in words: `bound by timingSeconds` becomes `bound by time of periapsis
+ * passage`, and a number that follows the key of a limit directly (`alongTrackKm is 3.2`) gets its unit.
+ */
+export function withWords(sentence: string): string {
+  return sentence
+    .replace(
+      /\b([a-z]+[A-Z]\w*(?:@\d+(?:\.\d+)?)?|symplectic(?= is required)|explicit(?= is required))(?![\w-])( is [-\d.,e]*\d)?/g,
+      (whole, key: string, value = "") => {
+        const [name = ""] = key.split("@");
+        if (!isLimitKey(name)) {
+          const words = REQUIREMENT_WORDS[name];
+          return words === undefined ? whole : `${words}${value}`;
+        }
+        return `${limitWords(key)}${value === "" ? "" : withUnit(value, limitUnit(key))}`;
+      },
+    )
+    .replace(
+      /(\d(?:\.\d+)?)e([-+]?\d+)/g,
+      (_, mantissa: string, power: string) =>
+        `${mantissa}${NO_BREAK}×${NO_BREAK}10${superscript(Number(power))}`,
+    );
 }
 
 export function limitUnit(key: string): string {

@@ -192,6 +192,7 @@ describe("wrong input: exit 2, one line, nothing written", () => {
     ["sweep no-such-file.json", "no such file"],
     ["sweep package.json --stepper rk4", "is given by the study file"],
     ["converge --eccentricity 0.1", "name at least one"],
+    ["converge --stepper rk4 --eccentricity 0.1 --orbits 1.5", "--orbits: must be a whole number, got 1.5"],
     ["converge --stepper rk4 --eccentricity 0.1 --steps-per-orbit 100,200", "at least five different values"],
     ["long-run --stepper leapfrog --eccentricity 0.1 --steps-per-orbit 0", "greater than 0"],
     ["long-run --stepper leapfrog --eccentricity 0.1 --steps-per-orbit 10 --orbits 1e99", "steps long"],

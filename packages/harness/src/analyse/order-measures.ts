@@ -24,16 +24,16 @@ export const ORDER_MEASURE_TITLES: Readonly<Record<OrderMeasure, string>> = {
 };
 
 /**
- * Size of the error, from the score of the run over whole orbits and, for passages, from that of the run a quarter of an orbit longer
- * (a late body would miss the last passage otherwise). Null where the run gave none.
+ * Size of the error, from the score of the run over whole orbits and, for passages, from that of a longer run (a late body
+ * would miss the last passage otherwise). Null where the run gave none.
  */
 export function errorOf(measure: OrderMeasure, run: Score, passages: Score): number | null {
   const value = ((): number | null => {
     switch (measure) {
       case "energyAtWholeOrbits":
-        return run.energy.final;
+        return endsWithAnOrbit(run) ? run.energy.final : null;
       case "apsis":
-        return run.apsis.final;
+        return endsWithAnOrbit(run) ? run.apsis.final : null;
       case "period":
       case "timing":
         return passages[measure].max;
@@ -44,6 +44,11 @@ export function errorOf(measure: OrderMeasure, run: Score, passages: Score): num
   const source = measure === "period" || measure === "timing" ? passages : run;
   const guessed = measure === "phase" && source.phaseUncertain;
   return value === null || guessed || source.ended.status === "diverged" ? null : Math.abs(value);
+}
+
+/** A fixed step that does not divide the orbit ends short of it, and what would be seen there is where. */
+function endsWithAnOrbit({ stepsPerOrbit, orbits }: Score): boolean {
+  return stepsPerOrbit === null || Number.isInteger(stepsPerOrbit * orbits);
 }
 
 /** Unit roundoff of IEEE doubles. */

@@ -1,7 +1,7 @@
 import { Command } from "commander";
 import { type ObservedOrder, observeOrders } from "../analyse/observed-orders.ts";
 import { ORDER_MEASURE_TITLES } from "../analyse/order-measures.ts";
-import { InvalidInputError } from "../errors.ts";
+import { InvalidInputError, mustBe } from "../errors.ts";
 import { prepareFolder, writeResultFolder } from "../output/result-folder.ts";
 import { CellPool } from "../run/cell-pool.ts";
 import { loadOwnSteppers } from "../run/own-steppers.ts";
@@ -48,6 +48,7 @@ export function convergeVerb(_outcome: Outcome): Command {
       const own = await loadOwnSteppers(given.own);
       const steppers = requireSteppers(given.stepper, own);
       const eccentricities = requireOption("--eccentricity", given.eccentricity);
+      if (!Number.isSafeInteger(given.orbits)) throw mustBe("--orbits", "a whole number", given.orbits);
       checkLadder("--steps-per-orbit", given.stepsPerOrbit);
       checkLadder("--tolerance", given.tolerance);
       if (given.out !== undefined) await prepareFolder(given.out);

@@ -103,6 +103,16 @@ describe("observed orders at e = 0.3 over one orbit", () => {
     expect(position?.points[0]).toMatchObject({ stepsPerOrbit: null });
   });
 
+  it("steps that do not divide the orbit: nothing is said of whole orbits", async () => {
+    const { result } = await observeOrders(
+      study(["suzuki-4"], { stepsPerOrbit: [64.5, 91.5, 128.5, 181.5, 256.5] }),
+      pool,
+    );
+    const order = (measure: string) => result.orders.find((entry) => entry.measure === measure)?.order;
+    expect([order("energyAtWholeOrbits"), order("apsis")]).toEqual([null, null]);
+    expect(Math.abs((order("timing") ?? 0) - 4)).toBeLessThan(0.05);
+  });
+
   it("circular orbit: no apsis, nothing graded", async () => {
     const { result } = await observeOrders(
       study(["rk4"], { eccentricities: [0], stepsPerOrbit: [16, 23, 32, 45, 64, 91] }),

@@ -1,7 +1,7 @@
 import type { StepperInfo } from "@perigauge/steppers";
 import type { Scenario } from "../scenario/scenario.ts";
 import type { Fleet } from "./fleet.ts";
-import { nineEach } from "./fleet.ts";
+import { daysToSeconds, nineEach } from "./fleet.ts";
 import { type Knob, knobOf } from "./knob.ts";
 import type { Measurer, Reading, Sample } from "./measure.ts";
 import { startsOf } from "./starts.ts";
@@ -24,7 +24,12 @@ export interface ChoiceContext {
 }
 
 export function makeCandidate(stepper: StepperInfo, { scenario, fleet }: ChoiceContext): Candidate {
-  const starts = startsOf(scenario, stepper.timeReversible);
+  const { durationSeconds, longestPeriodSeconds } = fleet;
+  const horizons = scenario.limits.map(({ withinDays }) =>
+    daysToSeconds(withinDays ?? Number.POSITIVE_INFINITY),
+  );
+  const shortest = Math.min(durationSeconds, ...horizons) / longestPeriodSeconds;
+  const starts = startsOf(scenario, stepper.timeReversible, shortest);
   const samples = nineEach(fleet).flatMap((point) =>
     starts.map((startAnomalyDeg) => ({ point, startAnomalyDeg })),
   );

@@ -18,7 +18,7 @@ import { unmetRequirement } from "./requirements.ts";
 import { type Screened, type Screening, screen } from "./screen.ts";
 import { type Found, findCliff, search } from "./search.ts";
 import { sensitivity } from "./sensitivity.ts";
-import { verify } from "./verify.ts";
+import { isVerified, verify } from "./verify.ts";
 import { whatWouldHaveToGive } from "./what-would-have-to-give.ts";
 import { explainRanking } from "./why.ts";
 
@@ -32,6 +32,8 @@ export interface ChooseOptions {
   readonly seed: number;
   /** Work to spend, in minutes of two nominal cores; what does not fit is extrapolated. Default 2. */
   readonly minutes?: number;
+  /** Modules of steppers of one's own, which a command that re-runs their cells must name. */
+  readonly ownFiles?: readonly string[];
   readonly version: string;
   readonly command: string;
   readonly now: () => number;
@@ -142,8 +144,9 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
     const verified = await timed("verification", () =>
       verify(context, candidate, found.fineness as number, hard),
     );
-    if (verified === null) {
-      excluded.push(failedEntry(context, candidate, entry.screening, found));
+    if (!isVerified(verified)) {
+      const failed = { ...found, nearest: verified.reading, nearestFineness: verified.fineness };
+      excluded.push(failedEntry(context, candidate, entry.screening, failed));
       continue;
     }
     const cliff = await timed("search", () => findCliff(context, candidate, verified.fineness, hard));
@@ -156,7 +159,7 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
     ranking.push(ranked);
   }
   ranking.sort((a, b) => rankKey(a) - rankKey(b) || a.stepper.localeCompare(b.stepper));
-  const explained = explainRanking(ranking);
+  const explained = explainRanking(ranking).map((entry) => namingOwn(entry, options));
   // Where nothing could be run in full within the budget, the cheapest of the screened is the answer, and says that it is extrapolated.
   const winner = explained.find((entry) => entry.evidence === "run") ?? explained[0] ?? null;
 
@@ -172,6 +175,7 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
   const winnerStepper = options.steppers.find(({ id }) => id === winner?.stepper);
   options.onPhase?.("sensitivity", "");
   const changes = await timed("sensitivity", () => sensitivity(context, tried));
+  if (current !== null) current = namingOwn(current, options);
   const body = {
     format: "perigauge-choice/1",
     scenario,
@@ -200,6 +204,17 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
     },
   };
   return { choice, context, tried };
+}
+
+/** Commands that re-run a stepper of one's own name its module. */
+function namingOwn<T extends RankedStepper>(entry: T, { steppers, ownFiles = [] }: ChooseOptions): T {
+  if (steppers.find(({ id }) => id === entry.stepper)?.family !== "own") return entry;
+  const own = ownFiles.map((file) => ` --own ${file}`).join("");
+  const errors = Object.entries(entry.errors).map(([id, error]) => [
+    id,
+    { ...error, command: error.command.replace(/^perigauge score/, `perigauge score${own}`) },
+  ]);
+  return { ...entry, errors: Object.fromEntries(errors) };
 }
 
 /** Each body's share of a relative error, from the mass ratio, where the scenario gives one. */

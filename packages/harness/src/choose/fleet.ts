@@ -26,6 +26,7 @@ export interface Fleet {
   readonly orbits: readonly FleetOrbit[];
   readonly durationSeconds: number;
   readonly shortestPeriodSeconds: number;
+  readonly longestPeriodSeconds: number;
 }
 
 const SECONDS_PER_DAY = 86400;
@@ -38,13 +39,20 @@ export function buildFleet(scenario: Scenario, eccentricityStep = 0): Fleet {
     sampler: shifted(orbitSampler(orbit, `scenario.orbits[${i}]`, scenario.bodyRadiusKm), eccentricityStep),
   }));
   const { gravitationalParameterKm3S2 } = scenario;
-  const draft: Fleet = { gravitationalParameterKm3S2, orbits, durationSeconds: 0, shortestPeriodSeconds: 0 };
-  const shortestPeriodSeconds = Math.min(...corners(draft).map((point) => point.periodSeconds));
+  const draft: Fleet = {
+    gravitationalParameterKm3S2,
+    orbits,
+    durationSeconds: 0,
+    shortestPeriodSeconds: 0,
+    longestPeriodSeconds: 0,
+  };
+  const periods = corners(draft).map((point) => point.periodSeconds);
+  const shortestPeriodSeconds = Math.min(...periods);
   const durationSeconds =
     "days" in scenario.duration
       ? scenario.duration.days * SECONDS_PER_DAY
       : scenario.duration.orbits * shortestPeriodSeconds;
-  return { ...draft, durationSeconds, shortestPeriodSeconds };
+  return { ...draft, durationSeconds, shortestPeriodSeconds, longestPeriodSeconds: Math.max(...periods) };
 }
 
 function shifted(sampler: OrbitSampler, eccentricityStep: number): OrbitSampler {

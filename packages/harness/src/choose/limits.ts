@@ -64,6 +64,8 @@ export function readLimit(limit: Limit, score: Score, point: FleetPoint): LimitR
   const orbits = limit.withinDays === null ? null : orbitsOf(point, daysToSeconds(limit.withinDays));
   const horizon = orbits === null ? undefined : score.horizons?.find((entry) => entry.orbits === orbits);
   const { max, maxAtOrbit } = horizon?.maxima[measure] ?? score[measure];
+  // A horizon shorter than one step has no error yet.
+  if (max === null && horizon !== undefined && measure !== "timing") return { value: 0, atOrbit: 0 };
   // On a circular orbit there is no apsis to turn: that limit says nothing. Any other measure that is undefined cannot be shown to hold.
   if (max === null)
     return {

@@ -56,7 +56,10 @@ export class Measurer {
     runs: readonly { readonly sample: Sample; readonly cell: Cell }[],
     extraHorizons: (point: FleetPoint) => readonly number[] = () => [],
   ): Promise<Reading[]> {
-    const keys = runs.map(({ cell }) => JSON.stringify(cell));
+    // Two orbits of a fleet may be alike: they share scores, but each reading belongs to its own orbit.
+    const keys = runs.map(({ sample: { point }, cell }) =>
+      JSON.stringify([point.orbitIndex, point.parameters, cell]),
+    );
     const fresh = new Map<string, { sample: Sample; cell: Cell; job: CellJob }>();
     runs.forEach(({ sample, cell }, i) => {
       const key = keys[i] as string;
@@ -68,12 +71,14 @@ export class Measurer {
       const sorted = [...horizons].filter((orbits) => orbits < cell.orbits).sort((a, b) => a - b);
       fresh.set(key, { sample, cell, job: { cell, horizons: sorted } });
     });
-    const jobs = [...fresh.values()]
-      .map(({ job }) => job)
-      .filter((job) => !this.scores.has(JSON.stringify(job)));
-    const scores = await this.pool.run(jobs, { measures: measuresOf(this.limits), summaries: "maxima" });
-    jobs.forEach((job, i) => {
-      this.scores.set(JSON.stringify(job), scores[i] as Score);
+    const wanted = new Map([...fresh.values()].map(({ job }) => [JSON.stringify(job), job]));
+    const jobs = [...wanted].filter(([key]) => !this.scores.has(key));
+    const scores = await this.pool.run(
+      jobs.map(([, job]) => job),
+      { measures: measuresOf(this.limits), summaries: "maxima" },
+    );
+    jobs.forEach(([key], i) => {
+      this.scores.set(key, scores[i] as Score);
     });
     for (const [key, { sample, cell, job }] of fresh) {
       this.known.set(key, this.read(sample, cell, this.scores.get(JSON.stringify(job)) as Score));

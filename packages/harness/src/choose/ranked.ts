@@ -118,7 +118,7 @@ export function failedEntry(
     const allowed = (limit?.limit ?? 0) / designFactor;
     return {
       stepper: stepper.id,
-      reason: `holds the limits at no step allowed: at best ${limit?.id} is ${describe(value)} at ${describeKnob(knob.physical(nearestFineness))}, ${threeDigits(value / allowed)} times the ${describe(allowed)} allowed (limit / design factor), run in full${found.stalled ? "; finer steps do not help: rounding" : ""}`,
+      reason: `holds the limits over the band of no step allowed: ${limit?.id} is ${describe(value)} at ${describeKnob(knob.physical(nearestFineness))}, ${threeDigits(value / allowed)} times the ${describe(allowed)} allowed (limit / design factor), run in full${found.stalled ? "; finer steps do not help: rounding" : ""}`,
       limit: limit?.id ?? null,
       value: Number.isFinite(value) ? value : null,
       allowed,

@@ -59,7 +59,7 @@ export async function screen(
   while (
     fine.ratio * designFactor > 1 &&
     fine.fineness < knob.finest &&
-    fine.evaluationsPerOrbit < evaluationLimit
+    costOf(fine, candidate) < evaluationLimit
   ) {
     coarse = fine;
     fine = await at(Math.min(knob.finest, fine.fineness * stride), SHORT_ORBITS);
@@ -81,6 +81,13 @@ export async function screen(
   const estimate: Screened =
     fineness === near ? longer : { ...carriedOn(longer, fineness / near, designFactor), fineness };
   return { tried, estimate, order };
+}
+
+/** Evaluations an orbit, by the step where they follow from it; a run that diverged early says nothing of its cost. */
+function costOf({ fineness, ratio, evaluationsPerOrbit }: Screened, { stepper, knob }: Candidate): number {
+  if (knob.kind === "step" && stepper.evaluationsPerStep !== null)
+    return fineness * stepper.evaluationsPerStep;
+  return Number.isFinite(ratio) ? evaluationsPerOrbit : 0;
 }
 
 function slope(coarse: Screened, fine: Screened): number {

@@ -17,12 +17,20 @@ export interface Verified {
 }
 
 /** Why a fineness was given up, and at which fineness to go on. */
-interface Failure {
+export interface Failure {
   readonly fineness: number;
   readonly reading: Reading;
 }
 
-const MOST_ATTEMPTS = 12;
+export function isVerified(outcome: Verified | Failure): outcome is Verified {
+  return "at" in outcome;
+}
+
+const MOST_ATTEMPTS = 24;
+/** Beyond so many times the fineness that the search found, verification is given up. */
+const MOST_FINER = 3;
+/** After so many attempts each move is one notch longer. */
+const STRIDE_GROWTH = 3;
 const RANDOM_PAIRS = 32;
 /** A band cut by the rounding floor must still reach this far, or the step is not recommended. */
 const LEAST_BAND = 1.25;
@@ -31,25 +39,29 @@ const FLOOR_SUSPECT = 1.1;
 
 /**
  * Verifies a fineness in full, with all samples: over the band of factors, at whole and nearly whole steps per orbit, and at random pairs
- * of orbit and start. Any failure moves the boundary past it and the whole is repeated. Null where no fineness survives.
+ * of orbit and start. Any failure moves the boundary past it and the whole is repeated. The last failure where no fineness survives.
  */
 export async function verify(
   context: ChoiceContext,
   candidate: Candidate,
   start: number,
   hard: Sample[],
-): Promise<Verified | null> {
+): Promise<Verified | Failure> {
   const { knob } = candidate;
   let fineness = start;
+  let last: Failure | null = null;
   for (let attempt = 0; attempt < MOST_ATTEMPTS; attempt++) {
     const outcome = await attemptAt(context, candidate, fineness, hard);
-    if (!("reading" in outcome)) return outcome;
+    if (isVerified(outcome)) return outcome;
     hard.push(outcome.reading.sample);
-    const next = knob.move(Math.max(fineness, outcome.fineness), knob.notch);
-    if (next <= fineness) return null;
+    last = outcome;
+    // The first steps away are small; a wide resonance is left behind by larger ones.
+    const stride = knob.notch ** (1 + Math.floor(attempt / STRIDE_GROWTH));
+    const next = knob.move(Math.max(fineness, outcome.fineness), stride);
+    if (next <= fineness || next > MOST_FINER * start) break;
     fineness = next;
   }
-  return null;
+  return last as Failure;
 }
 
 async function attemptAt(
@@ -90,13 +102,13 @@ async function attemptAt(
   for (const samples of [hard, candidate.samples]) {
     bandFinest = fineness;
     for (const factor of knob.band) {
-      if (floor !== null && bandFineness(candidate, fineness, factor) >= floor) break;
+      if (floor !== null && bandFineness(candidate, fineness, factor) > floor) break;
       const failed = await run(bandCells(samples, factor));
       if (failed !== null) {
         const at = bandFineness(candidate, fineness, factor);
         if (factor < FLOOR_SUSPECT || !(await isFloor(context, candidate, failed, at)))
           return { fineness: at, reading: failed };
-        if (factor < LEAST_BAND) return { fineness: at, reading: failed };
+        if (bandFinest < LEAST_BAND * fineness) return { fineness: at, reading: failed };
         floor = bandFinest;
         break;
       }

@@ -70,6 +70,7 @@ export function chooseVerb(outcome: Outcome): Command {
           steppers,
           seed: given.seed,
           minutes: given.minutes,
+          ownFiles: given.own,
           version,
           command: commandLine(file, given),
           now: () => performance.now(),

@@ -1,5 +1,6 @@
 import { findStepper } from "@perigauge/steppers";
 import { LIMIT_KEYS } from "../choose/choice.ts";
+import { buildFleet, daysToSeconds, type Fleet } from "../choose/fleet.ts";
 import { describeValue, InvalidInputError, mustBe } from "../errors.ts";
 import { unknownStepper } from "../run/find-stepper.ts";
 import { readJson } from "../text/read-json.ts";
@@ -25,8 +26,9 @@ export function parseScenario(value: unknown): Scenario {
     names.add(orbit.name);
     orbitSampler(orbit, `scenario.orbits[${i}]`, scenario.bodyRadiusKm);
   });
+  const fleet = buildFleet(scenario);
   scenario.limits.forEach((limit, i) => {
-    checkLimit(limit, `scenario.limits[${i}]`, scenario);
+    checkLimit(limit, `scenario.limits[${i}]`, fleet);
   });
   scenario.steppers?.forEach((id, i) => {
     if (findStepper(id) === undefined) throw unknownStepper(`scenario.steppers[${i}]`, id);
@@ -39,15 +41,27 @@ export function parseScenario(value: unknown): Scenario {
   return scenario;
 }
 
-function checkLimit(limit: ScenarioLimit, where: string, scenario: Scenario): void {
+/** Passages of periapsis that timing is judged by need this many orbits, from any start and for a late body. */
+const TIMING_ORBITS = 2.5;
+
+function checkLimit(limit: ScenarioLimit, where: string, fleet: Fleet): void {
   const given = LIMIT_KEYS.filter((key) => limit[key] !== undefined);
   if (given.length !== 1) {
     throw new InvalidInputError(
       `${where}: must name exactly one measure (${LIMIT_KEYS.join(", ")}), got ${given.length}`,
     );
   }
-  const days = "days" in scenario.duration ? scenario.duration.days : null;
-  if (limit.withinDays !== undefined && days !== null && limit.withinDays > days) {
+  const days = fleet.durationSeconds / daysToSeconds(1);
+  const within = Math.min(days, limit.withinDays ?? days);
+  const timingDays = (TIMING_ORBITS * fleet.longestPeriodSeconds) / daysToSeconds(1);
+  if (limit.timingSeconds !== undefined && within < timingDays) {
+    throw mustBe(
+      `${where}.timingSeconds`,
+      `over at least ${TIMING_ORBITS} orbits (${Number(timingDays.toPrecision(4))} days), which it is judged by`,
+      within,
+    );
+  }
+  if (limit.withinDays !== undefined && limit.withinDays > days) {
     throw mustBe(`${where}.withinDays`, `at most the duration (${days} days)`, limit.withinDays);
   }
 }

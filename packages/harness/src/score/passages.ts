@@ -162,7 +162,8 @@ export class Passages {
     );
     // Exact passages are one period apart: the one of equal number lies that many periods from the one found.
     const timing = (toPassage - exactToPassage) / PERIOD + (exactIndex - this.next);
-    if (!this.reference.circular && this.osculatingEccentricityStrays()) this.strayed = true;
+    if (!Number.isFinite(timing) || (!this.reference.circular && this.osculatingEccentricityStrays()))
+      this.strayed = true;
     this.next += 1;
     this.count += 1;
     // Passage k falls in the orbit that it ends.
@@ -218,7 +219,8 @@ export class PassageSummary {
 
   constructor(wholeOrbits: number) {
     this.blocks = new BlockMeans(wholeOrbits);
-    this.samples = new GrowthSamples(wholeOrbits);
+    // A late body's last passage falls after the end of the run: growth is judged up to the one before.
+    this.samples = new GrowthSamples(wholeOrbits - 1);
   }
 
   accept(value: number, orbit: number, atOrbit: number, detailed: boolean): void {

@@ -140,6 +140,8 @@ export class RunScorer {
       ? new Passages(reference, start, this.wholeOrbits, plan.summaries === "all", plan.observePassage)
       : null;
     this.lastState.set(start);
+    // Horizons shorter than one step are reached before the first.
+    this.closeHorizons(null);
   }
 
   /** Scores the chunk; false where the run has diverged in it and must not go on. */
@@ -295,7 +297,7 @@ export class RunScorer {
   finish(trajectory: Pick<Trajectory, "evaluations" | "rejectedSteps" | "smallestStep">): Score {
     const { cell, stepsPerOrbit, step } = this.resolved;
     const orbitsMade = this.lastTime / TWO_PI;
-    const evaluations = trajectory.evaluations;
+    const evaluations = this.evaluationsMade(trajectory);
     const evaluationsPerOrbit = orbitsMade > 0 ? evaluations / orbitsMade : evaluations;
     const floors = {
       energy: energyFloor(evaluationsPerOrbit),
@@ -337,6 +339,13 @@ export class RunScorer {
       ended,
       ...(this.plan.horizons.length > 0 ? { horizons: this.horizonMaxima } : {}),
     };
+  }
+
+  /** A run that diverged was advanced to the end of its chunk: only the steps up to the one that failed count. */
+  private evaluationsMade({ evaluations }: Pick<Trajectory, "evaluations">): number {
+    const { evaluationsPerStep, startEvaluations, knob } = this.resolved.stepper;
+    if (this.divergence === null || knob !== "step" || evaluationsPerStep === null) return evaluations;
+    return Math.min(evaluations, (startEvaluations ?? 0) + evaluationsPerStep * (this.steps + 1));
   }
 
   private summaryOf(

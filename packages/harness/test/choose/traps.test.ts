@@ -4,7 +4,7 @@ import { pointAt } from "../../src/choose/fleet.ts";
 import { worst } from "../../src/choose/measure.ts";
 import { screen } from "../../src/choose/screen.ts";
 import { search } from "../../src/choose/search.ts";
-import { verify } from "../../src/choose/verify.ts";
+import { isVerified, type Verified, verify } from "../../src/choose/verify.ts";
 import { candidateOf, contextOf, scenarioOf } from "./context.ts";
 
 /*
@@ -45,9 +45,9 @@ describe("step resonance", () => {
     const context = contextOf(shorter);
     const candidate = candidateOf(context, "kahan-li-8");
     const verified = await verify(context, candidate, 154.2, []);
-    expect(verified).not.toBeNull();
-    expect(verified?.fineness as number).toBeGreaterThan(154.2);
-    expect(worst(verified?.at ?? []).ratio).toBeLessThanOrEqual(1);
+    expect(isVerified(verified)).toBe(true);
+    expect(verified.fineness).toBeGreaterThan(154.2);
+    expect(worst((verified as Verified).at).ratio).toBeLessThanOrEqual(1);
   });
 });
 
@@ -62,9 +62,10 @@ describe("error that is not monotonic in the step", () => {
     expect(await ratioAt(198)).toBeGreaterThan(1);
     const found = await search(context, candidate, 168);
     const verified = await verify(context, candidate, found.fineness as number, [...found.worstSamples]);
-    expect(verified?.fineness as number).toBeGreaterThan(198);
+    expect(isVerified(verified)).toBe(true);
+    expect(verified.fineness).toBeGreaterThan(198);
     for (const factor of [1, 1.1, 1.3, 1.7]) {
-      expect(await ratioAt((verified?.fineness as number) * factor)).toBeLessThanOrEqual(1);
+      expect(await ratioAt(verified.fineness * factor)).toBeLessThanOrEqual(1);
     }
   });
 });
@@ -105,7 +106,7 @@ describe("growth laws", () => {
 
 describe("rounding floor", () => {
   // dormand-nystrom-12, e = 0.3, 1,000 orbits: 2e-6 km at 300 steps per orbit, 4e-5 km at 5,000.
-  it("smaller steps are worse, and the search reports the finest that holds", async () => {
+  it("smaller steps are worse: a band that meets the floor is cut there, and one that is too short is refused", async () => {
     const scenario = scenarioOf(
       { limits: [{ alongTrackKm: 1.5e-5 }], duration: { orbits: 1000 }, designFactor: 1, start: 45 },
       0.3,
@@ -115,6 +116,15 @@ describe("rounding floor", () => {
     const ratioAt = async (n: number) => worst(await runFull(context, candidate, candidate.samples, n)).ratio;
     expect(await ratioAt(300)).toBeLessThan(1);
     expect(await ratioAt(5000)).toBeGreaterThan(1);
+    // Half of 600, where the error is ten times that of 300: verification from 300 reaches less than twice as fine, or is refused.
+    const outcome = await verify(context, candidate, 300, []);
+    if (isVerified(outcome)) {
+      expect(outcome.bandFinest).toBeLessThan(600);
+      expect(outcome.floor).toBe(outcome.bandFinest);
+      expect(outcome.bandFinest).toBeGreaterThanOrEqual(1.25 * outcome.fineness);
+    } else {
+      expect(outcome.reading.ratio).toBeGreaterThan(1);
+    }
   });
 
   it("where no step holds because of rounding, nothing is recommended", async () => {

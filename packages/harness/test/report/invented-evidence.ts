@@ -1,5 +1,11 @@
 import type { Choice, LimitErrors, RankedStepper } from "../../src/choose/choice.ts";
-import type { ChoiceEvidence, CostPoint, History, SurveyPoint } from "../../src/report/evidence.ts";
+import type {
+  ChoiceEvidence,
+  CostPoint,
+  History,
+  SurveyPlane,
+  SurveyPoint,
+} from "../../src/report/evidence.ts";
 
 /**
  * INVENTED evidence for tests of the report: every number comes from a formula below and says nothing about any stepper. Errors follow
@@ -163,6 +169,7 @@ export function inventedEvidence(invention: Invention = {}): ChoiceEvidence {
       againstStep: steppers.flatMap((stepper) =>
         [50, 100, 200, 400, 800, 1600, 3200].map((n) => surveyPoint(stepper, 0.58, n)),
       ),
+      plane: planeOf(steppers.filter(({ variable }) => !variable).slice(0, 6)),
     },
     histories: [
       ...(chosen === undefined ? [] : [historyOf(chosen.stepper, chosen.symplectic, "choice", 1e-5)]),
@@ -301,6 +308,36 @@ function surveyPoint(stepper: Invented, eccentricity: number, n: number): Survey
   };
 }
 
+/** The limit is a phase error of 10⁻⁵. */
+function planeOf(steppers: readonly Invented[]): SurveyPlane {
+  const eccentricities = [0.1, 0.2, 0.3, 0.4, 0.5, 0.6, 0.7, 0.8, 0.9];
+  const stepsPerOrbit = Array.from({ length: 9 }, (_, i) => 20 * 2 ** i + 0.3);
+  return {
+    orbits: 10,
+    semiMajorAxisKm: 15_928,
+    steppers: steppers.map(({ stepper }) => stepper),
+    eccentricities,
+    stepsPerOrbit,
+    cells: steppers.flatMap((stepper) =>
+      eccentricities.flatMap((e) =>
+        stepsPerOrbit.map((n) => {
+          const { phase, evaluationsPerOrbit, command } = surveyPoint(stepper, e, n);
+          return {
+            stepper: stepper.stepper,
+            eccentricity: e,
+            stepsPerOrbit: n,
+            evaluationsPerOrbit,
+            phase,
+            ratio: phase === null ? null : phase * 1e5,
+            bindingLimit: phase === null ? null : "phaseRad",
+            command,
+          };
+        }),
+      ),
+    ),
+  };
+}
+
 function historyOf(stepper: string, symplectic: boolean, role: History["role"], size: number): History {
   const growth = symplectic ? 1 : 2;
   return {
@@ -325,6 +362,18 @@ function historyOf(stepper: string, symplectic: boolean, role: History["role"], 
         alongTrackKm: phaseRad * 16_000,
       };
     }),
+    periods: Array.from({ length: 246 }, (_, index) => ({
+      orbit: index + 1.9,
+      periodRelative: -size * 1e-3 * (symplectic ? 1 : index + 1),
+    })),
+    oscillation: {
+      periapsisAtOrbit: 0.96,
+      points: Array.from({ length: 100 }, (_, index) => ({
+        orbit: index / 100,
+        energyRelative:
+          size * 1e-4 * (Math.sin((2 * Math.PI * index) / 100) + (symplectic ? 0 : index / 200)),
+      })),
+    },
   };
 }
 

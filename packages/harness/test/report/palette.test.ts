@@ -31,6 +31,14 @@ describe.each(["light", "dark"] as const)("palette, %s", (scheme) => {
     }
   });
 
+  it("has heats that ink is readable on (WCAG 2.2, 1.4.3) and that run one way in lightness", () => {
+    const heats = names.filter((candidate) => candidate.startsWith("heat")).map(of);
+    expect(heats).toHaveLength(6);
+    for (const heat of heats) expect(contrast(of("ink"), heat), heat).toBeGreaterThanOrEqual(4.5);
+    const fromPaper = heats.map((heat) => contrast(of("paper"), heat));
+    expect(fromPaper).toEqual([...fromPaper].sort((a, b) => a - b));
+  });
+
   it("uses no colour twice", () => {
     expect(new Set(names.map(of)).size).toBe(names.length);
   });

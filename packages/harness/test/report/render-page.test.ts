@@ -59,6 +59,38 @@ describe("page of a choice", () => {
     expect(body).toContain(String(choice.provenance.seed));
   });
 
+  it("says limits and requirements in words, and how far an extrapolated error may go", () => {
+    const evidence = inventedEvidence();
+    const { choice } = evidence;
+    const [first, second, ...rest] = choice.ranking;
+    const errors = Object.fromEntries(
+      Object.entries(second!.errors).map(([key, error]) => [key, { ...error, uncertaintyFactor: 37 }]),
+    );
+    const ranking = [
+      { ...first!, why: "fewest evaluations, bound by timingSeconds" },
+      { ...second!, evidence: "extrapolated" as const, errors, why: "bound by alongTrackKm@7" },
+      ...rest,
+    ];
+    const excluded = [
+      {
+        ...choice.excluded[0]!,
+        reason: "holds at no step: semiMajorAxisM is 1.36e8, 2,930 times the 0.5 allowed",
+      },
+      {
+        ...choice.excluded[0]!,
+        stepper: "other",
+        reason: "does not take a fixed step, and fixedStep is required",
+      },
+    ];
+    const text = bodyOf(pageOf({ ...evidence, choice: { ...choice, ranking, excluded } }));
+    expect(text).toContain("bound by time of periapsis passage");
+    expect(text).toContain("bound by position along the track, first 7 days");
+    expect(text).toContain("semi-major axis is 1.36\u00a0×\u00a010⁸\u00a0m, 2,930 times");
+    expect(text).toContain("and a fixed step is required");
+    expect(text).toContain("errors up to 37 times larger");
+    expect(text).not.toMatch(/\b(?:timingSeconds|alongTrackKm|semiMajorAxisM|fixedStep)\b/);
+  });
+
   it("says what a changed case would take and what the production code should show", () => {
     const text = body.replace(/<[^>]+>/g, "");
     expect(text).toContain("limits 10 times tighter");

@@ -15,7 +15,8 @@ interface Result {
   readonly stderr: string;
 }
 
-function perigauge(line: string): Promise<Result> {
+/** As a process of its own, with threads. */
+function asProcess(line: string): Promise<Result> {
   return new Promise((resolve) => {
     execFile(
       process.execPath,
@@ -24,6 +25,23 @@ function perigauge(line: string): Promise<Result> {
       (error, stdout, stderr) => resolve({ code: error === null ? 0 : Number(error.code), stdout, stderr }),
     );
   });
+}
+
+/** In this process, which saves the start of another. */
+async function perigauge(line: string): Promise<Result> {
+  const written = { stdout: "", stderr: "" };
+  const spies = (["stdout", "stderr"] as const).map((name) =>
+    vi.spyOn(process[name], "write").mockImplementation((text) => {
+      written[name] += String(text);
+      return true;
+    }),
+  );
+  try {
+    const code = await runCommandLine(buildProgram, line.split(" "));
+    return { code, ...written };
+  } finally {
+    for (const spy of spies) spy.mockRestore();
+  }
 }
 
 let folder: string;
@@ -73,7 +91,7 @@ describe("converge", () => {
       } };`,
     );
     const { code, stdout } = await perigauge(
-      `converge --own ${own} --eccentricity 0.2 --steps-per-orbit 250:8000:6:log --out ${join(folder, "orders")}`,
+      `converge --own ${own} --eccentricity 0.2 --steps-per-orbit 250:8000:6:log --out ${join(folder, "orders")} --workers 1`,
     );
     expect(code).toBe(0);
     expect(stdout).toMatch(/my-euler +0\.2 +energy, largest +- +1\.0\d ± 0\.\d\d +5 /);
@@ -83,7 +101,9 @@ describe("converge", () => {
       "scores.csv",
       "scores.ndjson",
     ]);
-    const few = await perigauge("converge --stepper rk4 --eccentricity 0.6 --steps-per-orbit 60:90:5");
+    const few = await perigauge(
+      "converge --stepper rk4 --eccentricity 0.6 --steps-per-orbit 60:90:5 --workers 1",
+    );
     expect(few.code).toBe(0);
     expect(few.stdout).toContain("no asymptotic window");
   });
@@ -91,7 +111,7 @@ describe("converge", () => {
 
 describe("long-run", () => {
   it("tells a symplectic stepper from one that drifts", async () => {
-    const { code, stdout, stderr } = await perigauge(
+    const { code, stdout, stderr } = await asProcess(
       "long-run --stepper leapfrog,rk4 --eccentricity 0.3 --steps-per-orbit 150.37 --orbits 256 --json",
     );
     expect([code, stderr]).toEqual([0, ""]);
@@ -115,7 +135,7 @@ describe("long-run", () => {
 
   it("runs 10,000 orbits by default, exits 1 on a limit, and shows uncertainties", async () => {
     const { code, stdout, stderr } = await perigauge(
-      "long-run --stepper leapfrog --eccentricity 0.1 --steps-per-orbit 20.37 --limit phase=1",
+      "long-run --stepper leapfrog --eccentricity 0.1 --steps-per-orbit 20.37 --limit phase=1 --workers 1",
     );
     expect(code).toBe(1);
     expect(stderr).toMatch(
@@ -132,7 +152,7 @@ describe("sweep", () => {
 
   it("writes NDJSON, CSV and the result whole, and shards add up to the grid", async () => {
     const out = join(folder, "sweep");
-    const all = await perigauge(`sweep ${grid} --out ${out} --json`);
+    const all = await asProcess(`sweep ${grid} --out ${out} --json`);
     expect([all.code, all.stderr]).toEqual([0, ""]);
     const result = JSON.parse(all.stdout);
     expect(result).toMatchObject({ format: "perigauge-sweep/1", shard: null, cells: 9 });
@@ -145,12 +165,12 @@ describe("sweep", () => {
     const csv = (await readFile(join(out, "scores.csv"), "utf8")).trimEnd().split("\r\n");
     expect(csv.length).toBe(10);
     expect(csv[0]).toMatch(/^stepper,eccentricity,stepsPerOrbit,.*phase\.max/);
-    const shards = await Promise.all(
-      [1, 2].map(async (i) =>
-        JSON.parse((await perigauge(`sweep ${grid} --shard ${i}/2 --json --workers 1`)).stdout),
-      ),
-    );
-    const joined = Array.from({ length: 9 }, (_, i) => shards[i % 2].scores[Math.floor(i / 2)]);
+    const shards: { readonly scores: readonly unknown[] }[] = [];
+    for (const i of [1, 2]) {
+      const { stdout } = await perigauge(`sweep ${grid} --shard ${i}/2 --json --workers 1`);
+      shards.push(JSON.parse(stdout));
+    }
+    const joined = Array.from({ length: 9 }, (_, i) => shards[i % 2]?.scores[Math.floor(i / 2)]);
     expect(joined).toEqual(result.scores);
   });
 
@@ -166,7 +186,7 @@ describe("sweep", () => {
       summations: ["plain", "compensated"],
     };
     expect(new Ajv2020({ strict: true }).validate(studyJsonSchema(), study)).toBe(true);
-    const { code, stdout } = await perigauge(`sweep ${await file("study.json", study)} --json`);
+    const { code, stdout } = await perigauge(`sweep ${await file("study.json", study)} --json --workers 1`);
     expect(code).toBe(0);
     const { scores } = JSON.parse(stdout);
     expect(scores.length).toBe(3 * 3 * 2 * 2);
@@ -174,7 +194,7 @@ describe("sweep", () => {
   });
 
   it("exits 1 where a cell breaks a limit", async () => {
-    const { code, stderr } = await perigauge(`sweep ${grid} --limit energy.max=1e-6`);
+    const { code, stderr } = await perigauge(`sweep ${grid} --limit energy.max=1e-6 --workers 1`);
     expect(code).toBe(1);
     expect(stderr).toMatch(/^perigauge: rk4, e = 0, 100 steps per orbit: energy\.max is /);
   });
@@ -197,23 +217,11 @@ describe("wrong input: exit 2, one line, nothing written", () => {
     ["long-run --stepper leapfrog --eccentricity 0.1 --steps-per-orbit 0", "greater than 0"],
     ["long-run --stepper leapfrog --eccentricity 0.1 --steps-per-orbit 10 --orbits 1e99", "steps long"],
   ])("%s", async (line, expected) => {
-    const written = { stdout: "", stderr: "" };
-    const spies = (["stdout", "stderr"] as const).map((name) =>
-      vi.spyOn(process[name], "write").mockImplementation((text) => {
-        written[name] += String(text);
-        return true;
-      }),
-    );
-    let code: number;
-    try {
-      code = await runCommandLine(buildProgram, [...line.split(" "), "--out", join(folder, "nothing")]);
-    } finally {
-      for (const spy of spies) spy.mockRestore();
-    }
+    const { code, stdout, stderr } = await perigauge(`${line} --out ${join(folder, "nothing")}`);
     expect(code).toBe(2);
-    expect(written.stdout).toBe("");
-    expect(written.stderr.trimEnd().split("\n").length).toBe(1);
-    expect(written.stderr).toContain(expected);
+    expect(stdout).toBe("");
+    expect(stderr.trimEnd().split("\n").length).toBe(1);
+    expect(stderr).toContain(expected);
     expect((await readdir(folder)).includes("nothing")).toBe(false);
   });
 });

@@ -155,6 +155,52 @@ describe.skipIf(missing !== null)(`report in a browser${missing === null ? "" : 
     await page.context().close();
   });
 
+  it("the slider moves the curves to another eccentricity, and says which", async () => {
+    const page = await open("seven", 1280);
+    const drawing = '[data-chart="error-at-one-eccentricity"]';
+    const marks = `[...document.querySelectorAll('${drawing} .mark-symbol path')].map((mark) => mark.getAttribute("transform")).join()`;
+    const before = await page.evaluate(marks);
+    expect(await page.locator(`${drawing} svg`).textContent()).toContain("e = 0.6");
+    const slider = page.getByLabel("eccentricity");
+    await slider.focus();
+    await page.keyboard.press("ArrowLeft");
+    await expect.poll(() => page.evaluate(marks)).not.toBe(before);
+    expect(await page.locator(`${drawing} svg`).textContent()).toContain("e = 0.5");
+    await page.keyboard.press("ArrowRight");
+    await expect.poll(() => page.evaluate(marks)).toBe(before);
+    expect(troubles).toEqual([]);
+    await page.context().close();
+  });
+
+  it("another limit, typed, changes which steppers qualify and where the line lies", async () => {
+    const page = await open("seven", 1280);
+    const drawing = page.locator('[data-chart="error-against-cost"] svg');
+    const rings = drawing.locator('.qualifying_rings path, .mark-symbol path[stroke="var(--limit)"]');
+    const holding = async (): Promise<number> =>
+      Number(
+        /(\d+) steppers? holds? the limits|(\d+) steppers hold the limits/.exec(
+          (await drawing.textContent()) ?? "",
+        )?.[1],
+      );
+    const [steppers, ringed] = [await holding(), await rings.count()];
+    expect(steppers).toBeGreaterThan(1);
+    expect(ringed).toBe(steppers);
+    const line = drawing.locator('.mark-rule line[stroke="var(--limit)"]').first();
+    const level = await line.getAttribute("transform");
+    const input = page.getByLabel("every limit of the scenario times");
+    await input.fill("0.05");
+    await expect.poll(() => rings.count()).toBeLessThan(ringed);
+    expect(await holding()).toBe(await rings.count());
+    expect(await line.getAttribute("transform")).not.toBe(level);
+    // Enter stays on the page; what is no number counts as 1.
+    await input.press("Enter");
+    await input.fill("");
+    await expect.poll(() => rings.count()).toBe(ringed);
+    expect(await line.getAttribute("transform")).toBe(level);
+    expect(troubles).toEqual([]);
+    await page.context().close();
+  });
+
   it("a grey stepper is brought out too", async () => {
     const page = await open("sixty", 1280);
     await page.locator(".legend summary").click();
@@ -191,7 +237,7 @@ describe.skipIf(missing !== null)(`report in a browser${missing === null ? "" : 
   it("every link and button is reached by keyboard, the way to the charts first", async () => {
     const page = await open("seven", 1280);
     const reached = new Set<string>();
-    for (let press = 0; press < 60; press++) {
+    for (let press = 0; press < 80; press++) {
       await page.keyboard.press("Tab");
       const label = await page.evaluate("document.activeElement.textContent");
       if (press === 0) expect(label).toBe("Skip to the charts");

@@ -38,13 +38,16 @@ export function withWords(sentence: string): string {
   return sentence
     .replace(
       /\b([a-z]+[A-Z]\w*(?:@\d+(?:\.\d+)?)?|symplectic(?= is required)|explicit(?= is required))(?![\w-])( is [-\d.,e]*\d)?/g,
-      (whole, key: string, value = "") => {
+      (whole, key: string, value: string | undefined, place: number) => {
         const [name = ""] = key.split("@");
         if (!isLimitKey(name)) {
           const words = REQUIREMENT_WORDS[name];
-          return words === undefined ? whole : `${words}${value}`;
+          return words === undefined ? whole : `${words}${value ?? ""}`;
         }
-        return `${limitWords(key)}${value === "" ? "" : withUnit(value, limitUnit(key))}`;
+        const words = `${limitWords(key)}${value === undefined ? "" : withUnit(value, limitUnit(key))}`;
+        return sentence.slice(0, place).endsWith(". ")
+          ? words.charAt(0).toUpperCase() + words.slice(1)
+          : words;
       },
     )
     .replace(

@@ -161,7 +161,10 @@ export async function chooseStepper(scenario: Scenario, options: ChooseOptions):
   ranking.sort((a, b) => rankKey(a) - rankKey(b) || a.stepper.localeCompare(b.stepper));
   const explained = explainRanking(ranking).map((entry) => namingOwn(entry, options));
   // Where nothing could be run in full within the budget, the cheapest of the screened is the answer, and says that it is extrapolated.
-  const winner = explained.find((entry) => entry.evidence === "run") ?? explained[0] ?? null;
+  const winner =
+    explained.find((entry) => entry.evidence === "run") ??
+    explained.find(({ margin: held }) => held >= designFactor * (1 - 1e-6)) ??
+    null;
 
   let current: CurrentChoice | null = null;
   if (scenario.current !== undefined) {

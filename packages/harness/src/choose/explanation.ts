@@ -35,9 +35,7 @@ export function explain(
     );
   } else if (cliff !== null) {
     sentences.push(
-      cliff.ratio < 1.2
-        ? "Watch the step: the cliff is near, and a step a few per cent longer breaks a limit."
-        : `The step could grow by a factor of ${threeDigits(cliff.ratio)} before a limit breaks.`,
+      `${cliff.ratio < 1.2 ? "Watch out, the cliff is near: the" : "The"} ${winner.tolerance === null ? "step" : "tolerance"} can grow by a factor of ${threeDigits(cliff.ratio)}, and a limit breaks beyond.`,
     );
   }
   sentences.push(

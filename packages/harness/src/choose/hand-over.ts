@@ -6,6 +6,7 @@ import { type FleetPoint, orbitsOf } from "./fleet.ts";
 
 /** The hand-over runs are compared over this long, or the whole duration where it is shorter. */
 const DAYS = 7;
+const MOST_STEPS = 1e6;
 
 /**
  * What the engineer should see when the choice is repeated with the production code switched to a point mass: how far runs with step h and
@@ -18,7 +19,7 @@ export function handOver(context: ChoiceContext, stepper: Stepper, choice: Ranke
     .map(({ sample }) => sample.point)
     .find((candidate) => candidate.orbit === place?.orbit && candidate.eccentricity === place.eccentricity);
   if (place === undefined || point === undefined || choice.stepSeconds === null) return null;
-  const seconds = Math.min(DAYS * 86400, context.fleet.durationSeconds);
+  const seconds = Math.min(DAYS * 86400, context.fleet.durationSeconds, MOST_STEPS * choice.stepSeconds);
   const steps = Math.floor(seconds / choice.stepSeconds);
   const h = choice.stepSeconds * point.meanMotion;
   const start = startState(point, place.startAnomalyDeg);

@@ -23,9 +23,16 @@ export function screenedErrors(worst: readonly ScreenedLimit[]): LimitErrors {
   return Object.fromEntries(
     worst.map(({ limit, value, reading, uncertaintyFactor }) => [
       limit.id,
-      { ...entry(limit, reading, value, reading.cell.orbits), uncertaintyFactor },
+      {
+        ...entry(limit, reading, value, Math.min(reading.cell.orbits, horizonOrbits(limit, reading))),
+        uncertaintyFactor,
+      },
     ]),
   );
+}
+
+function horizonOrbits({ withinDays }: Limit, { sample }: Reading): number {
+  return withinDays === null ? Number.POSITIVE_INFINITY : orbitsOf(sample.point, daysToSeconds(withinDays));
 }
 
 function entry(limit: Limit, { sample, cell }: Reading, value: number, atOrbit: number): LimitErrors[string] {

@@ -1,4 +1,5 @@
 import type { ScenarioLimit } from "../scenario/scenario.ts";
+import { angleFloor, energyFloor } from "../score/growth.ts";
 import type { HorizonMaxima, MeasureName, Score } from "../score/score.ts";
 import { LIMIT_KEYS, type LimitKey } from "./choice.ts";
 import { daysToSeconds, type FleetPoint, orbitsOf } from "./fleet.ts";
@@ -74,6 +75,19 @@ export function readLimit(limit: Limit, score: Score, point: FleetPoint): LimitR
     };
   const value = convert(max, point);
   return { value: value >= 0 ? value : Number.POSITIVE_INFINITY, atOrbit: maxAtOrbit ?? 0 };
+}
+
+/** Rounding floor of a limit at the end of a run, as `growth.ts` states it for each kind of measure. */
+export function roundingFloor(
+  limit: Limit,
+  point: FleetPoint,
+  orbits: number,
+  evaluationsPerOrbit: number,
+): number {
+  const { measure, convert } = PHYSICAL[limit.key];
+  if (measure === "energy") return convert(energyFloor(evaluationsPerOrbit)(orbits), point);
+  const angle = angleFloor(evaluationsPerOrbit)(orbits);
+  return convert(measure === "timing" ? angle / (2 * Math.PI) : angle, point);
 }
 
 /** Physical value of a limit from maxima kept at a horizon; 0 where the measure was not defined yet. */

@@ -4,6 +4,7 @@ import type { Candidate, ChoiceContext } from "./candidate.ts";
 import { corners, daysToSeconds, type FleetPoint, orbitsOf, pointAt } from "./fleet.ts";
 import { extrapolate, steepestGrowth } from "./growth-law.ts";
 import type { Limit } from "./limits.ts";
+import { roundingFloor } from "./limits.ts";
 import { type Reading, readingOfHorizon, type Sample } from "./measure.ts";
 import { screeningStartsOf } from "./starts.ts";
 
@@ -35,6 +36,8 @@ const SHORT_ORBITS = 10;
 const LONGER_ORBITS = 60;
 /** Screening stops at this many force evaluations an orbit; beyond, the estimate is carried on with the method's order. */
 const MOST_EVALUATIONS = 65_536;
+/** An estimate is carried no further than this beyond what was screened. */
+const MOST_CARRIED = 1000;
 
 /**
  * Screening of one stepper: runs of ten orbits at the corners of the ranges and a few starts, finer and finer until the extrapolated
@@ -70,7 +73,7 @@ export async function screen(
     if (!(order > 0.5) || fine.fineness >= knob.finest || !Number.isFinite(fine.ratio))
       return { tried, estimate: null, order };
     const factor = (fine.ratio * designFactor) ** (1 / order);
-    return { tried, estimate: carriedOn(fine, factor, designFactor), order };
+    return { tried, estimate: carriedOn(context, candidate, fine, factor), order };
   }
   const near = knob.snap(coarse === null ? fine.fineness : crossing(coarse, fine, order, designFactor));
   const longer = await at(near, LONGER_ORBITS);
@@ -78,8 +81,7 @@ export async function screen(
   const power = order > 0.5 ? order : Math.max(1, candidate.stepper.order);
   const factor = Number.isFinite(longer.ratio) ? (longer.ratio * designFactor) ** (1 / power) : 2;
   const fineness = knob.snap(near * factor);
-  const estimate: Screened =
-    fineness === near ? longer : { ...carriedOn(longer, fineness / near, designFactor), fineness };
+  const estimate = fineness === near ? longer : carriedOn(context, candidate, longer, fineness / near);
   return { tried, estimate, order };
 }
 
@@ -100,10 +102,28 @@ function crossing(coarse: Screened, fine: Screened, order: number, designFactor:
   return order > 0.5 ? coarse.fineness * (coarse.ratio * designFactor) ** (1 / order) : fine.fineness;
 }
 
-/** Cost grows with the fineness of a step in proportion, and hardly with that of a tolerance near by. */
-function carriedOn(from: Screened, factor: number, designFactor: number): Screened {
-  const evaluationsPerOrbit = from.evaluationsPerOrbit * factor;
-  return { ...from, fineness: from.fineness * factor, evaluationsPerOrbit, ratio: 1 / designFactor };
+/**
+ * A screening carried on to another fineness, where the limits should just be met. Cost grows in proportion to the steps, and as the
+ * inverse tolerance to the power 1/order. Null where the limits lie below the rounding floor there.
+ */
+function carriedOn(
+  { designFactor, measurer }: ChoiceContext,
+  { stepper, knob }: Candidate,
+  from: Screened,
+  factor: number,
+): Screened | null {
+  const cost = knob.kind === "step" ? factor : factor ** (1 / Math.max(1, stepper.order));
+  const evaluationsPerOrbit = from.evaluationsPerOrbit * cost;
+  const scale = 1 / (designFactor * from.ratio);
+  const worst = from.worst.map((entry) => ({ ...entry, value: entry.value * scale }));
+  const belowFloor = worst.some(({ limit, reading }) => {
+    const orbits = orbitsOf(reading.sample.point, measurer.durationSeconds);
+    return (
+      roundingFloor(limit, reading.sample.point, orbits, evaluationsPerOrbit) * designFactor > limit.limit
+    );
+  });
+  if (belowFloor || !(factor <= MOST_CARRIED)) return null;
+  return { ...from, fineness: from.fineness * factor, evaluationsPerOrbit, ratio: 1 / designFactor, worst };
 }
 
 /** How many times larger an extrapolated value would be with the steepest growth that theory allows. */

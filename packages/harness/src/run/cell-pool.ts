@@ -7,6 +7,7 @@ import type { Cell, MeasureName, Score } from "../score/score.ts";
 import { type CellJob, type CellTask, runCellTask } from "./cell-task.ts";
 import { type LongRunTask, runLongRunTask } from "./long-run-task.ts";
 import { taskIndices } from "./task-indices.ts";
+import { outcomeOf, resultOf } from "./task-outcome.ts";
 
 /** What of each run is to be measured, for all jobs of a call alike. */
 export interface PoolPlan {
@@ -52,7 +53,7 @@ export class CellPool {
           summaries: plan.summaries,
           ownFiles: this.ownFiles,
         };
-        const done: Score[] = this.pool === null ? await runCellTask(task) : await this.pool.run(task);
+        const done = resultOf<Score[]>(await (this.pool?.run(task) ?? outcomeOf(() => runCellTask(task))));
         indices.forEach((index, k) => {
           const score = done[k] as Score;
           scores[index] = score;
@@ -71,8 +72,9 @@ export class CellPool {
     return Promise.all(
       cells.map(async (cell) => {
         const task: LongRunTask = { cell, ownFiles: this.ownFiles };
-        const run: LongRun =
-          this.pool === null ? await runLongRunTask(task) : await this.pool.run(task, { name: "longRun" });
+        const run = resultOf<LongRun>(
+          await (this.pool?.run(task, { name: "longRun" }) ?? outcomeOf(() => runLongRunTask(task))),
+        );
         this.stepsRun += run.score.steps;
         this.cellsRun += 1;
         this.onCells(1);

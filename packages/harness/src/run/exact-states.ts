@@ -74,9 +74,14 @@ export function exactAtPeriods(
   kind: ExactOrbitKind,
 ): ExactState[] {
   const orbit = exactOrbit(eccentricity, startAnomalyDeg, kind);
-  return periods.map((t) => exactState(orbit, ddScale(twoPi, t)));
+  return periods.map((t) => {
+    if (!(Math.abs(t) <= MOST_PERIODS)) throw mustBe("--periods", `at most ${MOST_PERIODS} in size`, t);
+    return exactState(orbit, ddScale(twoPi, t));
+  });
 }
 
+/** Beyond this many periods double-double no longer holds the anomaly to an ulp. */
+const MOST_PERIODS = 1e12;
 const one = ddOf(1);
 
 function exactOrbit(eccentricity: number, startAnomalyDeg: number, kind: ExactOrbitKind): ExactOrbit {

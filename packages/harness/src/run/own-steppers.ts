@@ -28,10 +28,25 @@ export async function loadOwnSteppers(files: readonly string[]): Promise<Stepper
       if (findStepper(own.id) !== undefined || steppers.some(({ id }) => id === own.id)) {
         throw new InvalidInputError(`${file}: the id "${own.id}" is taken already`);
       }
-      steppers.push(ownStepper(own));
+      steppers.push(ownStepper(guarded(own, file)));
     }
   }
   return steppers;
+}
+
+/** What a stepper of one's own throws is wrong input, and says where it came from. */
+function guarded(own: OwnStepper, file: string): OwnStepper {
+  return {
+    id: own.id,
+    step: (q, v, h, acceleration) => {
+      try {
+        own.step(q, v, h, acceleration);
+      } catch (error) {
+        const reason = error instanceof Error ? error.message.split("\n")[0] : String(error);
+        throw new InvalidInputError(`${file}: the step of "${own.id}" failed (${reason})`);
+      }
+    },
+  };
 }
 
 function isOwnStepper(value: unknown): value is OwnStepper {

@@ -31,8 +31,13 @@ export function resolveCell(cell: Cell, stepper: Stepper): ResolvedCell {
     if (cell.tolerance === undefined)
       throw new InvalidInputError(`${stepper.id}: takes a tolerance, not a step (--tolerance)`);
     if (!(cell.tolerance > 0 && cell.tolerance < 1)) throw mustBe("tolerance", "in (0, 1)", cell.tolerance);
+    const fewest = (cell.orbits * TWO_PI) / (cell.maxStep ?? Number.POSITIVE_INFINITY);
+    if (fewest > MOST_STEPS)
+      throw mustBe("maxStep", `no shorter than a run of ${MOST_STEPS} steps`, cell.maxStep);
     return { cell, stepper, step: null, stepsPerOrbit: null, steps: null };
   }
+  if (cell.maxStep !== undefined)
+    throw new InvalidInputError(`${stepper.id}: takes a fixed step, so --max-step says nothing`);
   if (cell.step === undefined && cell.stepsPerOrbit === undefined) {
     throw new InvalidInputError(`${stepper.id}: takes a step, not a tolerance (--steps-per-orbit or --step)`);
   }

@@ -1,6 +1,6 @@
 import { findStepper } from "@perigauge/steppers";
 import { LIMIT_KEYS } from "../choose/choice.ts";
-import { buildFleet, daysToSeconds, type Fleet } from "../choose/fleet.ts";
+import { buildFleet, corners, daysToSeconds, type Fleet } from "../choose/fleet.ts";
 import { describeValue, InvalidInputError, mustBe } from "../errors.ts";
 import { unknownStepper } from "../run/find-stepper.ts";
 import { readJson } from "../text/read-json.ts";
@@ -34,6 +34,7 @@ export function parseScenario(value: unknown): Scenario {
     if (findStepper(id) === undefined) throw unknownStepper(`scenario.steppers[${i}]`, id);
   });
   checkCurrent(scenario);
+  checkLengths(scenario, fleet);
   const { maxSeconds, multipleOfSeconds } = scenario.step ?? {};
   if (maxSeconds !== undefined && multipleOfSeconds !== undefined && maxSeconds < multipleOfSeconds) {
     throw mustBe("scenario.step.maxSeconds", `at least multipleOfSeconds (${multipleOfSeconds})`, maxSeconds);
@@ -61,9 +62,47 @@ function checkLimit(limit: ScenarioLimit, where: string, fleet: Fleet): void {
       within,
     );
   }
+  if (limit.apsisDeg !== undefined && corners(fleet).some(({ eccentricity }) => eccentricity === 0)) {
+    throw mustBe(
+      `${where}.apsisDeg`,
+      "asked of orbits that have an apsis (an eccentricity above 0)",
+      limit.apsisDeg,
+    );
+  }
   if (limit.withinDays !== undefined && limit.withinDays > days) {
     throw mustBe(`${where}.withinDays`, `at most the duration (${days} days)`, limit.withinDays);
   }
+}
+
+/** Runs longer than this are beyond what is searched. */
+const MOST_ORBITS = 1e7;
+const MOST_STEPS_PER_ORBIT = 2 ** 22;
+const FEWEST_STEPS_PER_ORBIT = 5;
+
+/** Steps and durations that no run can be made of. */
+function checkLengths({ step, current }: Scenario, fleet: Fleet): void {
+  const { shortestPeriodSeconds: shortest, longestPeriodSeconds: longest, durationSeconds } = fleet;
+  const orbits = durationSeconds / shortest;
+  if (!(orbits <= MOST_ORBITS)) throw mustBe("scenario.duration", `at most ${MOST_ORBITS} orbits`, orbits);
+  const smallest = longest / MOST_STEPS_PER_ORBIT;
+  const within = (seconds: number | undefined, where: string, least: number, most: number): void => {
+    if (seconds === undefined || (seconds >= least && seconds <= most)) return;
+    const bounds = `${Number(least.toPrecision(3))} to ${Number(most.toPrecision(3))} s here`;
+    throw mustBe(where, bounds, seconds);
+  };
+  within(step?.maxSeconds, "scenario.step.maxSeconds", smallest, Number.MAX_VALUE);
+  within(
+    step?.multipleOfSeconds,
+    "scenario.step.multipleOfSeconds",
+    smallest,
+    shortest / FEWEST_STEPS_PER_ORBIT,
+  );
+  within(
+    current?.stepSeconds,
+    "scenario.current.stepSeconds",
+    smallest,
+    Math.min(durationSeconds, shortest / 2),
+  );
 }
 
 function checkCurrent({ current }: Scenario): void {

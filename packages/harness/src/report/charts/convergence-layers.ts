@@ -6,6 +6,7 @@ import { colour } from "../look/palette.ts";
 import type { Looks, StepperLook } from "../look/stepper-look.ts";
 import { formatNumber } from "../text/number.ts";
 import type { Layer } from "./make-chart.ts";
+import { FADED } from "./series-layers.ts";
 
 type Field = "phase" | "energy" | "period";
 
@@ -123,8 +124,13 @@ function raised(order: number): string {
 export function orderLabels(orders: readonly FittedOrder[]): Layer[] {
   const said = orders.filter(({ order }) => order !== null);
   return said.flatMap(({ look, order }, index): Layer[] => {
-    const data = { values: [{}] };
-    const at = { x: { value: "width" as const }, y: { value: 8 + LINE * index } };
+    const data = { values: [{ stepper: look.stepper }] };
+    const at = {
+      x: { value: "width" as const },
+      y: { value: 8 + LINE * index },
+      // Fades with its curve when others are picked.
+      opacity: { condition: { param: "picked", value: 1 }, value: FADED },
+    };
     const text = {
       type: "text" as const,
       text: `${look.stepper}: order ${formatNumber(order, 3)}`,
@@ -141,7 +147,7 @@ export function orderLabels(orders: readonly FittedOrder[]): Layer[] {
           type: "point",
           filled: true,
           size: 45,
-          opacity: 1,
+
           shape: look.shape,
           color: colour(look.colourName),
           xOffset: -7,

@@ -24,13 +24,13 @@ export function errorPlanes(evidence: ChoiceEvidence): Chart[] {
       title: findingOf(evidence, plane, stepper, contour),
       description: `Largest error of ${stepper} over its limit, for ${plural(plane.eccentricities.length, "eccentricity", "eccentricities")} (vertical) and ${plural(plane.stepsPerOrbit.length, "number")} of steps per orbit (horizontal, logarithmic): runs of ${plural(plane.orbits, "orbit")}, carried on to ${durationWords(
         evidence.choice.scenario,
-      )} with the growth seen in them, at a semi-major axis of ${formatNumber(plane.semiMajorAxisKm, 4)} km. ${contour
+      )} with the growth seen in them, at a semi-major axis of ${formatNumber(plane.semiMajorAxisKm, 4)} km. Steps per orbit from which every limit holds: ${contour
         .map(({ eccentricity, steps }) =>
           steps === null
-            ? `At e = ${formatNumber(eccentricity)} not even ${formatNumber(Math.max(...plane.stepsPerOrbit))} steps per orbit hold every limit`
-            : `At e = ${formatNumber(eccentricity)} every limit holds from ${formatNumber(steps, 3)} steps per orbit on`,
+            ? `none drawn at e = ${formatNumber(eccentricity)}`
+            : `${formatNumber(steps, 2)} at e = ${formatNumber(eccentricity)}`,
         )
-        .join(". ")}.`,
+        .join(", ")}.`,
       note: "Figures: power of ten of error over limit, darker is more; × left the orbit. Red line: the limit, which holds to its right.",
       height: 250,
       rows,

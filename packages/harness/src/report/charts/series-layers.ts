@@ -11,7 +11,8 @@ export interface Tip {
   readonly format?: string;
 }
 
-const FADED = 0.1;
+/** Opacity of what is not picked. */
+export const FADED = 0.1;
 
 /**
  * Lines with marks, one per stepper. Rows carry `stepper`, `symplectic` and `ended`; those of muted steppers are drawn in grey behind (whole

@@ -25,11 +25,13 @@ export function qualifyingLayers(x: Quantity, y: Quantity, looks: Looks): Layer[
   const coloured = { field: "stepper", oneOf: looks.highlighted.map(({ stepper }) => stepper) };
   const holds = `isValid(datum[${JSON.stringify(y.field)}]) && datum[${JSON.stringify(y.field)}] <= ${ALLOWED}`;
   const words =
-    "datum.steppers + (datum.steppers === 1 ? ' stepper holds' : ' steppers hold') + ' the limits' + (datum.steppers > 0 ? ' at a point; cheapest: ' + datum.cheapest.stepper : '')";
+    "datum.steppers + (datum.steppers === 1 ? ' stepper holds' : ' steppers hold') + ' the limits' + (datum.steppers > 0 ? ' at a point\\ncheapest: ' + datum.cheapest.stepper : '')";
   const text = {
     type: "text" as const,
     align: "right" as const,
     baseline: "top" as const,
+    // Two lines: one would be wider than a phone.
+    lineBreak: "\n",
     dx: -4,
     dy: 2,
     fontSize: 11,

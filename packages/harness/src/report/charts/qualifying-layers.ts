@@ -7,11 +7,11 @@ import type { Layer } from "./make-chart.ts";
 export const LIMIT_PARAM: {
   readonly name: string;
   readonly value: number;
-  readonly bind: { readonly input: string; readonly name: string } & Record<string, string | number>;
+  readonly bind: { readonly input: string; readonly name: string };
 } = {
   name: "limit_times",
   value: 1,
-  bind: { input: "number", min: 0, step: "any", name: "every limit of the scenario times" },
+  bind: { input: "number", name: "every limit of the scenario times" },
 };
 
 /** The same as a number, 1 while nothing usable is typed: inputs hand over text. */

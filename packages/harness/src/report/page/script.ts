@@ -108,6 +108,8 @@ export const pageScript: string = String.raw`
     input?.addEventListener("submit", (event) => event.preventDefault());
     view.initialize(place, input).width(drawing.clientWidth);
     await view.runAsync();
+    // The schema of specifications knows no step of a typed number; without one only whole numbers count as valid.
+    for (const typed of input?.querySelectorAll("input[type=number]") ?? []) typed.step = "any";
     for (const attribute of ["role", "aria-roledescription", "aria-label"]) place.removeAttribute(attribute);
     place.setAttribute("aria-hidden", "true");
     drawing.replaceChildren(place);

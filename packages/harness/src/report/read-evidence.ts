@@ -17,12 +17,12 @@ export async function readEvidence(directory: string): Promise<ChoiceEvidence> {
   // What is drawn is the file as it stands, in its own order of fields.
   if (checked.success) return stored as ChoiceEvidence;
   const { message } = firstFinding(file, checked.error, stored);
-  throw new InvalidInputError(`${message}; ${remedy(stored)}`);
+  throw new InvalidInputError(`${message}; ${remedy(stored, directory)}`);
 }
 
-function remedy(stored: unknown): string {
+function remedy(stored: unknown, directory: string): string {
   const provenance = (stored as { choice?: { provenance?: { version?: unknown; command?: unknown } } } | null)
     ?.choice?.provenance;
   if (typeof provenance?.command !== "string") return "not a result of choose that can be drawn again";
-  return `a result of another version (${String(provenance.version)}): run it again with ${provenance.command} --out`;
+  return `a result of another version (${String(provenance.version)}): run it again with ${provenance.command} --out ${directory}`;
 }

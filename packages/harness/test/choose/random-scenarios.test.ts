@@ -10,7 +10,7 @@ import type { Scenario } from "../../src/scenario/scenario.ts";
 import { stepper } from "../support.ts";
 import { scenarioOf } from "./context.ts";
 
-const SCENARIOS = 100;
+const SCENARIOS = 40;
 const CELLS_EACH = 4;
 const FIELD = [
   "rk4",

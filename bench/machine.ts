@@ -1,4 +1,4 @@
-import { availableParallelism, cpus, loadavg } from "node:os";
+import { arch, availableParallelism, loadavg } from "node:os";
 import { compilerVersion, FLAGS } from "./c-loop.ts";
 
 /** Where figures were measured. */
@@ -14,7 +14,7 @@ export interface Machine {
 
 export function machine(): Machine {
   return {
-    processor: cpus()[0]?.model.trim() ?? "unknown",
+    processor: arch(),
     cores: availableParallelism(),
     node: process.version,
     compiler: compilerVersion(),

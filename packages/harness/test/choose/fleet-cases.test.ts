@@ -3,6 +3,7 @@ import { runFull } from "../../src/choose/candidate.ts";
 import { chooseStepper } from "../../src/choose/choose-stepper.ts";
 import { extrapolate } from "../../src/choose/growth-law.ts";
 import { fleetEvaluations } from "../../src/choose/ranked.ts";
+import { isVerified, verify } from "../../src/choose/verify.ts";
 import { CellPool } from "../../src/run/cell-pool.ts";
 import { parseScenario } from "../../src/scenario/parse-scenario.ts";
 import { stepper } from "../support.ts";
@@ -25,6 +26,25 @@ it("two orbits of equal shape are counted as two, and the ranking is that of one
   ]);
   expect(two.ranking.map(({ stepper: id }) => id)).toEqual(one.ranking.map(({ stepper: id }) => id));
   expect(two.ranking[0]?.evaluationsTotal).toBe(2 * (one.ranking[0]?.evaluationsTotal ?? 0));
+});
+
+it("verification runs random orbits and starts beside its samples, the same for the same seed", async () => {
+  const orbits = [{ name: "only", semiMajorAxisKm: 26600, eccentricity: { from: 0.1, to: 0.2 } }];
+  const randomRuns = async (): Promise<string[]> => {
+    const context = contextOf(
+      scenarioOf({ orbits, limits: [{ alongTrackKm: 10 }], duration: { orbits: 4 } }, 0),
+    );
+    const candidate = candidateOf(context, "rk4");
+    const outcome = await verify(context, candidate, 400, []);
+    expect(isVerified(outcome)).toBe(true);
+    // Samples lie on eighths of the range or halves of those; random orbits do not.
+    return context.measurer.readings
+      .filter(({ sample }) => (sample.point.parameters[0] * 1024) % 1 !== 0)
+      .map(({ cell }) => JSON.stringify(cell));
+  };
+  const runs = await randomRuns();
+  expect(runs).toHaveLength(32);
+  expect(await randomRuns()).toEqual(runs);
 });
 
 it("restarts charge the start-up again for every satellite", async () => {

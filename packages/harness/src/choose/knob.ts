@@ -78,7 +78,8 @@ function stepKnob(stepper: StepperInfo, scenario: Scenario, fleet: Fleet): Knob 
       eccentricity: point.eccentricity,
       // The step in seconds comes first; it is rounded once to normalised units.
       step: secondsOf(period, fineness, grid) * point.meanMotion,
-      orbits: orbitsOf(point, seconds),
+      // Uneven steps make whole orbits alike but not parts of one: whole orbits, rounded up, cover the duration from any start.
+      orbits: stepper.uneven ? Math.ceil(orbitsOf(point, seconds)) : orbitsOf(point, seconds),
       startAnomalyDeg,
       summation: "plain",
     }),

@@ -1,7 +1,9 @@
 import { describe, expect, it } from "vitest";
 import { buildFleet, pointAt } from "../../src/choose/fleet.ts";
 import { knobOf } from "../../src/choose/knob.ts";
+import { runCell } from "../../src/run/run-cell.ts";
 import type { Scenario } from "../../src/scenario/scenario.ts";
+import { FULL_PLAN } from "../../src/score/run-scorer.ts";
 import { stepper } from "../support.ts";
 import { scenarioOf } from "./context.ts";
 
@@ -42,6 +44,21 @@ describe("a step knob", () => {
     const cell = rk4.cellAt(point, 0, rk4.snap(fleet.shortestPeriodSeconds / 30), 86400);
     expect(cell.step).toBe(30 * point.meanMotion);
     expect(cell.orbits).toBe((86400 * point.meanMotion) / (2 * Math.PI));
+  });
+});
+
+describe("a step knob of uneven steps", () => {
+  it("has no grid, is capped by its largest step, and its runs cover the duration from any start", () => {
+    const { knob: sundman, fleet, period } = knob("sundman-rk4", { maxSeconds: 60, multipleOfSeconds: 5 });
+    // The step at apoapsis is 1 + e times the mean one.
+    expect(sundman.coarsest).toBeCloseTo((period / 60) * 1.3, 9);
+    expect(sundman.physical(200).stepSeconds).toBeNull();
+    for (const startAnomalyDeg of [0, 45, 90, 180, -90]) {
+      const seconds = 3.4 * period;
+      const cell = sundman.cellAt(pointAt(fleet, 0, 0, 0), startAnomalyDeg, sundman.coarsest, seconds);
+      const { finalState } = runCell(cell, stepper("sundman-rk4"), FULL_PLAN);
+      expect(finalState.t).toBeGreaterThanOrEqual(3.4 * 2 * Math.PI);
+    }
   });
 });
 
